@@ -1,0 +1,12 @@
+import { defineConfig } from '@playwright/test'
+
+export default defineConfig({
+  testDir: '.',
+  outputDir: '../../test-results/end-to-end',
+  timeout: 240_000,
+  expect: { timeout: 15_000 },
+  workers: 1,
+  retries: 0,
+  forbidOnly: true,
+  reporter: [['list'], ['json', { outputFile: '../../test-results/end-to-end.json' }]],
+})

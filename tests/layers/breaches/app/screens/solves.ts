@@ -1,0 +1,1 @@
+export const lazy = () => import('../../leash/clearance.ts')

@@ -1,0 +1,1 @@
+export const queue = new Worker(new URL('../../workers/judge.worker.ts', import.meta.url))

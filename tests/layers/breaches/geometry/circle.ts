@@ -1,0 +1,2 @@
+import { turn } from './turn.ts'
+export const circle = turn

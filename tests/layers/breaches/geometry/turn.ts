@@ -1,0 +1,2 @@
+import { circle } from './circle.ts'
+export const turn = circle

@@ -1,0 +1,1 @@
+export type Thing = 1

@@ -1,0 +1,2 @@
+import { openDB } from 'idb'
+export const open = openDB

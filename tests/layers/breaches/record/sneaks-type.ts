@@ -1,0 +1,1 @@
+export type A = import('../judge/ok.ts').Thing

@@ -1,0 +1,2 @@
+import left from 'left-pad'
+export const l = left

@@ -1,0 +1,2 @@
+import type { Thing } from '../judge/ok.ts'
+export type T = Thing
