@@ -1,6 +1,7 @@
 import type { ReadonlySignal } from '@preact/signals'
 import type { WalkResult } from '../../judge/result.ts'
 import type { FactDraft } from '../../record/facts.ts'
+import type { FactLog } from '../../record/log.ts'
 import type { Survey } from '../../record/survey.ts'
 
 /**
@@ -9,6 +10,8 @@ import type { Survey } from '../../record/survey.ts'
  */
 export interface Session {
   survey: ReadonlySignal<Survey>
+  /** The log as it is now, for the named operations of record/operations that make the drafts of a commit. */
+  log(): FactLog
   /** The surveyor using this phone. */
   person: ReadonlySignal<string>
   /** Resolves when the facts are durable, never before: only then may a screen say "saved". */
