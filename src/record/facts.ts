@@ -33,3 +33,6 @@ export interface FactDraft {
 export function factId(fact: Pick<Fact, 'device' | 'n'>): FactId {
   return `${fact.device}:${fact.n}`
 }
+
+/** The clock of facts made from a file that names no time: nothing is dated by it. */
+export const undated = '1970-01-01T00:00:00.000Z'

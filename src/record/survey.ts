@@ -239,8 +239,30 @@ export type SurveyView = v.InferOutput<typeof surveyView>
 export type LedBy = (typeof leads)[number]
 export type WalkState = (typeof states)[number]
 
-/** A survey in hand: its id and the folded view. */
+/** Several people's versions of one thing that nobody has settled. Answers in words carry theirs in `rivals` as well. */
+export interface Conflict {
+  entity: string
+  /**
+   * The plain field; `word/<item>` for an answer; `in` for an entity put in two places; `gone` for one removed here and
+   * edited there (it stays in view); `turn` for two turns at one segment's end.
+   */
+  field: string
+  /** The first is what the view shows. */
+  versions: readonly { fact: string; value: unknown; person?: string; clock: string }[]
+}
+
+/** A fact that this version of the view has no room for: kept and sent on, never shown as if it had been read. */
+export interface SetAside {
+  entity: string
+  field: string
+  expected: string
+  found: string
+}
+
+/** A survey in hand: its id and the folded view. Absent lists are empty ones. */
 export interface Survey {
   survey: string
   view: SurveyView
+  conflicts?: readonly Conflict[]
+  setAside?: readonly SetAside[]
 }

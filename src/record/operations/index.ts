@@ -1,0 +1,7 @@
+export * from './answer.ts'
+export * from './feature.ts'
+export * from './reading.ts'
+export * from './removal.ts'
+export * from './segment.ts'
+export * from './venue.ts'
+export * from './walk.ts'
