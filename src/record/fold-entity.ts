@@ -89,9 +89,9 @@ function foldFields(log: FactLog, entity: string, shape: Shape, issues: Issues, 
     if (field === 'in' && distinct.length > 1) issues.conflicts.push(conflict(entity, field, distinct))
     const key = keyOfField(field)
     const value = distinct[0]?.value
-    if (key === null || isReservedKey(key)) continue
+    if (key === null || key === 'id' || isReservedKey(key)) continue
     if (distinct.length > 1) issues.conflicts.push(conflict(entity, field, distinct))
-    const schema = entries[key]
+    const schema = Object.hasOwn(entries, key) ? entries[key] : undefined
     if (!schema) {
       node[key] = value
     } else if (value !== null) {
@@ -127,7 +127,8 @@ function foldWhole(log: FactLog, entity: string, shape: Shape, issues: Issues, a
   const node: Node = { ...(shape.schema === readingSchema ? signed(value, fact) : value), id: entity }
   for (const [name, { heads }] of slots ?? []) {
     const key = keyOfField(name)
-    if (key !== null && !isReservedKey(key) && heads[0] && heads[0].value !== null) node[key] = heads[0].value
+    if (key !== null && key !== 'id' && !isReservedKey(key) && heads[0] && heads[0].value !== null)
+      node[key] = heads[0].value
   }
   const read = v.safeParse(shape.schema as unknown as v.GenericSchema, node)
   if (read.success) return node

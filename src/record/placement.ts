@@ -50,7 +50,11 @@ export function place(places: Places, entity: string, placement: Placement | nul
   places.of.set(entity, placement)
   const siblings = siblingsOf(places, placement)
   siblings.ids.add(entity)
-  siblings.sorted = null
+  const last = siblings.sorted?.at(-1)
+  // Nearly every entity comes last: then the order stands, one longer.
+  if (siblings.sorted && last !== undefined && compareOrder(orderOf(places, last), placement.order) < 0)
+    siblings.sorted = [...siblings.sorted, entity]
+  else siblings.sorted = null
 }
 
 /** Ids in one list of a parent, in order, removed ones among them. */
@@ -58,9 +62,7 @@ export function childrenOf(places: Places, parent: string, list: string): readon
   const siblings = places.lists.get(parent)?.get(list)
   if (!siblings) return []
   siblings.sorted ??= [...siblings.ids].sort((a, b) => {
-    const left = places.of.get(a) as Placement
-    const right = places.of.get(b) as Placement
-    return compareOrder(left.order, right.order) || (a < b ? -1 : 1)
+    return compareOrder(orderOf(places, a), orderOf(places, b)) || (a < b ? -1 : 1)
   })
   return siblings.sorted
 }
@@ -68,6 +70,10 @@ export function childrenOf(places: Places, parent: string, list: string): readon
 /** Names of a parent's lists, sorted. */
 export function listsOf(places: Places, parent: string): string[] {
   return [...(places.lists.get(parent)?.keys() ?? [])].sort()
+}
+
+function orderOf(places: Places, entity: string): OrderKey {
+  return (places.of.get(entity) as Placement).order
 }
 
 function siblingsOf(places: Places, { parent, list }: Placement): Siblings {
