@@ -1,4 +1,4 @@
-import type { Gradient, Metres, MetresPerSecond, Newtons, Radians, Seconds } from './quantity.ts'
+import type { Decibels, Gradient, Metres, MetresPerSecond, Newtons, Radians, Seconds } from './quantity.ts'
 
 /**
  * Values in words for people. Rounding happens only here, and the caller says to which side: what there is (a clear
@@ -91,7 +91,7 @@ export function formatSpeed(value: MetresPerSecond, look: Look & { system: 'metr
 }
 
 /** A sound level: "62 dB(A)". Step in dB, default 1. */
-export function formatSound(value: number, look: Look): string {
+export function formatSound(value: Decibels, look: Look): string {
   return `${decimals(value, look.step ?? 1, look)} dB(A)`
 }
 

@@ -72,7 +72,7 @@ export function ask(choices: readonly (string | Choice)[]): Question {
 }
 
 /** "1240 mm or 1240 m?" */
-export function questionOf(choices: readonly Choice[]): string {
+function questionOf(choices: readonly Choice[]): string {
   const labels = choices.map((choice) => choice.label)
   return `${labels.slice(0, -1).join(', ')} or ${labels.at(-1)}?`
 }

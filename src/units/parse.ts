@@ -1,11 +1,11 @@
-import { ask, type Body, type Field, type Parsed, questionOf, refuse } from './parse-answer.ts'
+import { ask, type Body, type Choice, type Field, type Parsed, refuse } from './parse-answer.ts'
 import { isGradientUnit, readGradient } from './parse-gradient.ts'
 import { readMeasure } from './parse-measure.ts'
 import { numberToken, readNumber } from './parse-number.ts'
 import { type Tidied, tidy } from './parse-text.ts'
 import { findUnit } from './parse-units.ts'
 
-export type { Bound, Choice, Field, FieldQuantity, Parsed } from './parse-answer.ts'
+export type { Bound, Field, FieldQuantity, Parsed } from './parse-answer.ts'
 
 /** Quantity -> the greatest value that can have been read at a venue, SI; beyond it something slipped. */
 const most: Readonly<Record<Field['quantity'], number>> = {
@@ -37,13 +37,16 @@ const most: Readonly<Record<Field['quantity'], number>> = {
 export function parseQuantity(text: string, field: Field): Parsed {
   const tidied = tidy(text)
   if (!tidied.ok) return tidied
-  if (tidied.negative && !takesSign(field))
-    return refuse(`a ${field.quantity} has no minus sign: give the side or way apart`)
-  if (tidied.negative && tidied.bound !== 'exact')
-    return refuse('a bound on a minus value reads two ways: give the value')
+  const parsed = readTidied(tidied, field)
+  return parsed.ok || parsed.kind === 'refused' ? parsed : settle(parsed.choices, tidied, field)
+}
+
+function readTidied(tidied: Tidied, field: Field): Parsed {
+  const { negative, bound } = tidied
+  if (negative && !takesSign(field)) return refuse(`a ${field.quantity} has no minus sign: give the side or way apart`)
+  if (negative && bound !== 'exact') return refuse('a bound on a minus value reads two ways: give the value')
   const body = readBody(tidied, field)
-  if (body.ok) return finish(body, tidied, field)
-  return body.kind === 'refused' ? body : settle(body.choices, tidied, field)
+  return body.ok ? finish(body, tidied, field) : body
 }
 
 function takesSign(field: Field): boolean {
@@ -92,16 +95,19 @@ function sameValue(a: Parsed, b: Parsed): boolean {
   return a.ok && b.ok && a.value === b.value && a.bound === b.bound
 }
 
-/** Drops the choices that cannot stand; asks if what is left differs. */
-function settle(offered: readonly { label: string; text: string }[], tidied: Tidied, field: Field): Parsed {
+/** Drops the choices that cannot stand, or would be asked again; asks if what is left differs. */
+function settle(offered: readonly Choice[], tidied: Tidied, field: Field): Parsed {
   const choices = offered.map(({ label, text }) => {
     const full = /^[<>]/.test(text) ? text : tidied.prefix + text
-    return { label: label === text ? full : label, text: full, parsed: parseQuantity(full, field) }
+    const again = tidy(full)
+    return { label: label === text ? full : label, text: full, parsed: again.ok ? readTidied(again, field) : again }
   })
   const standing = choices.filter((choice) => choice.parsed.ok)
   const [only] = standing
-  if (only === undefined) return choices[0]?.parsed ?? refuse('not understood')
+  if (only === undefined) {
+    const refused = choices.map((choice) => choice.parsed).find((parsed) => !parsed.ok && parsed.kind === 'refused')
+    return refused ?? refuse('it can be read in too many ways: write it with its unit, without groups of digits')
+  }
   if (standing.every((choice) => sameValue(choice.parsed, only.parsed))) return only.parsed
-  const shown = standing.map(({ label, text }) => ({ label, text }))
-  return { ok: false, kind: 'ambiguous', question: questionOf(shown), choices: shown }
+  return ask(standing.map(({ label, text }) => ({ label, text })))
 }

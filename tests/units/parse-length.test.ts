@@ -165,6 +165,8 @@ describe('refused, with the reason', () => {
     ['3/2 in', /more than one/],
     ['1/0 in', /sixty-fourths/],
     ['1/3 in', /sixty-fourths/],
+    ['1,240 m 13', /too many ways/],
+    ['1 222 1 222 1 222 1 222 1 222 1 222', /too many ways/],
     ['99999999 m', /too great/],
     [`${'9'.repeat(60)} m`, /too great/],
     ['9'.repeat(10_240), /too long/],
