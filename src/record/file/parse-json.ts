@@ -7,11 +7,11 @@ export const longestFile = 20 * 1024 * 1024
 export type ParsedJson = { ok: true; value: unknown } | { ok: false; problems: Problem[] }
 
 /** JSON with its size and depth bounded before anything is built from it; no reserved key, no endless number. */
-export function parseJson(text: string): ParsedJson {
-  if (text.length > longestFile)
+export function parseJson(text: string, longest = longestFile): ParsedJson {
+  if (text.length > longest)
     return refused({
       path: '',
-      expected: `${longestFile / 1024 / 1024} million characters at most`,
+      expected: `${longest / 1024 / 1024} million characters at most`,
       found: `${Math.ceil(text.length / 1024 / 1024)} million`,
       whatToDo: 'Check that this is a survey file; split a survey of that size by walks.',
     })

@@ -1,0 +1,120 @@
+import type { Fact, FactDraft } from '../record/facts.ts'
+import { type FactLog, mergeFacts } from '../record/log.ts'
+import { backUp, type Restored, restore } from './back-up.ts'
+import { openDatabase, type Photo, type SurveyRow } from './database.ts'
+import { keepDraft, readDraft } from './drafts.ts'
+import { appendFacts, factsAfter, type Saved, type TakenIn, takeInFacts } from './facts.ts'
+import { clearMemo, keepMemo, readMemo, readWholeMemo } from './memo.ts'
+import { keepPhoto, readPhoto } from './photos.ts'
+import { changeSettings, deviceId, readSettings, renewDeviceId, type Settings } from './settings.ts'
+import { catchUp, openLog } from './snapshots.ts'
+import { askToPersist, type StorageState, storageState } from './storage-state.ts'
+import { openTabs } from './tabs.ts'
+import type { Trouble } from './trouble.ts'
+
+/** What this phone keeps. Every writing call resolves when it is durable, never before. */
+export interface Store {
+  /** This phone's id in facts. */
+  device(): string
+  renewDevice(): Promise<string>
+  /** Lines of the list of venues, the last changed first. */
+  surveys(): Promise<SurveyRow[]>
+  openSurvey(survey: string): Promise<FactLog>
+  /** Keeps drafts as this phone's facts, and only then takes them into the log, with what other tabs have added. */
+  commit(log: FactLog, drafts: readonly FactDraft[], person: string): Promise<Saved>
+  /** Keeps drafts as this phone's facts, for a log held elsewhere. */
+  append(survey: string, drafts: readonly FactDraft[], person: string): Promise<Saved>
+  /** Keeps facts from a file or another phone: all or none. */
+  takeIn(facts: readonly Fact[]): Promise<TakenIn>
+  /** Takes into an open log what the store holds beyond it. */
+  catchUp(log: FactLog): Promise<Fact[]>
+  factsAfter(survey: string, have: ReadonlyMap<string, number>): Promise<Fact[]>
+  /** Hears that another tab has added to a survey; returns how to stop. */
+  listen(heard: (survey: string) => void): () => void
+  keepDraft(survey: string, draft: unknown): Promise<{ saved: true } | Trouble>
+  readDraft(survey: string): Promise<unknown>
+  settings(): Promise<Settings>
+  changeSettings(change: Settings): Promise<{ saved: true } | Trouble>
+  readMemo(key: string): Promise<unknown>
+  readWholeMemo(): Promise<Map<string, unknown>>
+  keepMemo(entries: ReadonlyMap<string, unknown>): Promise<void>
+  clearMemo(): Promise<void>
+  keepPhoto(photo: Photo): Promise<{ saved: true } | Trouble>
+  readPhoto(id: string): Promise<Photo | null>
+  state(): Promise<StorageState>
+  askToPersist(): Promise<boolean | null>
+  backUp(): Promise<string>
+  restore(text: string): Promise<Restored>
+  close(): void
+}
+
+export type Opened = { ok: true; store: Store } | { ok: false; what: string; whatToDo: string }
+
+/** Opens this phone's store; a browser that keeps none is told in words. */
+export async function openStore(name = 'tautline'): Promise<Opened> {
+  if (typeof indexedDB === 'undefined') return keepsNothing()
+  try {
+    const database = await openDatabase(name)
+    let device = await deviceId(database)
+    const tabs = openTabs(name)
+    const append: Store['append'] = async (survey, drafts, person) => {
+      const saved = await appendFacts(database, survey, drafts, { device, person })
+      if (saved.saved) tabs.tell(survey)
+      return saved
+    }
+    const store: Store = {
+      device: () => device,
+      renewDevice: async () => (device = await renewDeviceId(database)),
+      surveys: async () =>
+        (await database.getAll('surveys')).sort((a, b) => (a.changed < b.changed ? 1 : a.changed > b.changed ? -1 : 0)),
+      openSurvey: (survey) => openLog(database, survey, device),
+      append,
+      async commit(log, drafts, person) {
+        const saved = await append(log.survey, drafts, person)
+        if (!saved.saved) return saved
+        const { refused } = mergeFacts(log, saved.facts)
+        // Another tab of this phone has written in between.
+        if (refused.length > 0) await catchUp(database, log)
+        return saved
+      },
+      async takeIn(facts) {
+        const taken = await takeInFacts(database, facts)
+        if (taken.saved) for (const survey of new Set(facts.map((fact) => fact.survey))) tabs.tell(survey)
+        return taken
+      },
+      catchUp: (log) => catchUp(database, log),
+      factsAfter: (survey, have) => factsAfter(database, survey, have),
+      listen: tabs.listen,
+      keepDraft: (survey, draft) => keepDraft(database, survey, draft),
+      readDraft: (survey) => readDraft(database, survey),
+      settings: () => readSettings(database),
+      changeSettings: (change) => changeSettings(database, change),
+      readMemo: (key) => readMemo(database, key),
+      readWholeMemo: () => readWholeMemo(database),
+      keepMemo: (entries) => keepMemo(database, entries),
+      clearMemo: () => clearMemo(database),
+      keepPhoto: (photo) => keepPhoto(database, photo),
+      readPhoto: (id) => readPhoto(database, id),
+      state: () => storageState(),
+      askToPersist: () => askToPersist(),
+      backUp: () => backUp(database),
+      restore: (text) => restore(database, text),
+      close() {
+        tabs.close()
+        database.close()
+      },
+    }
+    return { ok: true, store }
+  } catch (error) {
+    if (error instanceof DOMException) return keepsNothing(error.name)
+    throw error
+  }
+}
+
+function keepsNothing(why = 'no IndexedDB'): Opened {
+  return {
+    ok: false,
+    what: `This browser keeps nothing (${why}): a private window, or storage switched off. What is typed here would be lost.`,
+    whatToDo: 'Open the app in an ordinary window, or allow it to keep data, before you start.',
+  }
+}
