@@ -1,0 +1,85 @@
+import { metres, words } from './attributes.ts'
+import type { Kind } from './kind.ts'
+
+/** Places on the way that help: they are announced and move no verdict. */
+const shared = { aspect: null, feeds: [], weight: 'note', harm: 'comfort', unsensed: null, staleDays: 180 } as const
+
+export const places: readonly Kind[] = [
+  {
+    ...shared,
+    id: 'tactile-paving',
+    name: 'tactile paving',
+    attributes: [words('type', 'what it says', ['stop', 'guide', 'unclear']), metres('depth', 'depth along the way')],
+    spoken: 'Bumps underfoot. Stop and wait.',
+    fix: 'Repair it, and leave it uncovered.',
+    staleDays: 365,
+    tags: { tactile_paving: 'yes' },
+  },
+  {
+    ...shared,
+    id: 'handrail',
+    name: 'handrail',
+    attributes: [metres('height', 'height'), words('continuous', 'continuous', ['yes', 'no'])],
+    spoken: 'A rail begins at your {side} hand.',
+    fix: 'Carry the rail past the last step.',
+    staleDays: 365,
+    tags: { handrail: 'yes' },
+  },
+  {
+    ...shared,
+    id: 'seat',
+    name: 'seat or rest place',
+    attributes: [metres('height', 'height of the seat'), words('arms', 'arms', ['yes', 'no'])],
+    spoken: 'Seat, {clock}.',
+    fix: 'Keep it free.',
+    tags: { amenity: 'bench' },
+  },
+  {
+    ...shared,
+    id: 'refuge',
+    name: 'refuge in an alarm',
+    attributes: [words('callPoint', 'call point', ['yes', 'no'], 'always')],
+    spoken: 'Refuge, {clock}. Stand here if you are told to.',
+    fix: 'Name who comes, and write it into the plan.',
+    staleDays: 365,
+    tags: { emergency: 'assembly_point' },
+  },
+  {
+    ...shared,
+    id: 'charging-place',
+    name: 'charging or standby place',
+    attributes: [metres('clearWidth', 'clear floor for the robot'), words('watched', 'watched by', null)],
+    spoken: 'The robot rests here.',
+    fix: 'Reserve the space and its socket.',
+    tags: { amenity: 'device_charging_station' },
+  },
+  {
+    ...shared,
+    id: 'toilet',
+    name: 'toilet or destination room',
+    attributes: [metres('clearWidth', 'clear width to turn in'), words('robotWaits', 'where the robot waits', null)],
+    spoken: 'Room door, {clock}. The robot waits outside.',
+    fix: 'Name who watches the robot.',
+    tags: { amenity: 'toilets' },
+  },
+  {
+    ...shared,
+    id: 'signage',
+    name: 'sign, voice or announcement',
+    attributes: [words('speaks', 'voice or touch', ['voice', 'touch', 'both', 'none'])],
+    spoken: 'Listen for the announcement.',
+    fix: 'Voice and tactile signs.',
+    staleDays: 365,
+    tags: { information: 'audioguide' },
+  },
+  {
+    ...shared,
+    id: 'smell-clue',
+    name: 'smell',
+    attributes: [words('what', 'what, and when', null)],
+    spoken: '{what} may be smelt here.',
+    fix: 'None asked.',
+    staleDays: 60,
+    tags: {},
+  },
+]
