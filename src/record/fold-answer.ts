@@ -5,12 +5,13 @@ import { type Answer, answer as answerSchema } from './survey.ts'
 /** Who said or read it and when: the fact's, where the value does not name them. */
 export function signed<T extends { person?: string; time?: string }>(value: T, fact: Fact): T {
   const { person, clock } = fact
-  const dated = clock !== undated && /^\d{4}-\d{2}-\d{2}T\d{2}:\d{2}/.test(clock)
-  return {
-    ...(person === undefined ? {} : { person }),
-    ...(dated ? { time: clock } : {}),
-    ...value,
-  }
+  const named = value.person !== undefined || person === undefined
+  const dated = value.time !== undefined || clock === undated || clock[10] !== 'T'
+  if (named && dated) return value
+  const full = { ...value }
+  if (!named) full.person = person
+  if (!dated) full.time = clock
+  return full
 }
 
 export interface FoldedAnswer {

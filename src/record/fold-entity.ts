@@ -5,7 +5,7 @@ import { isReservedKey, sameJson } from './json.ts'
 import { type FactLog, headsOf } from './log.ts'
 import { childrenOf, listsOf, root } from './placement.ts'
 import { presenceOf } from './presence.ts'
-import { keyOfField, rootShape, type Shape, shapeOf } from './shapes.ts'
+import { keyOfField, requiredKeys, rootShape, type Shape, shapeOf } from './shapes.ts'
 import { compareFacts } from './slot.ts'
 import {
   type Answer,
@@ -100,15 +100,10 @@ function foldFields(log: FactLog, entity: string, shape: Shape, issues: Issues, 
       else aside(field, read.issues[0].expected ?? key, read.issues[0].received)
     }
   }
-  const absent = requiredKeys(entries).find((key) => node[key] === undefined)
+  const absent = requiredKeys(shape).find((key) => node[key] === undefined)
   if (absent === undefined) return node
   aside(absent, absent, 'nothing yet')
   return null
-}
-
-/** Plain keys without which a view is none. */
-function requiredKeys(entries: Shape['schema']['entries']): string[] {
-  return Object.keys(entries).filter((key) => keyOfField(key) !== null && entries[key]?.type !== 'exact_optional')
 }
 
 /** A reading or an override: written once, whole; fields beside it add to it. */
@@ -187,9 +182,10 @@ function nodesOf(log: FactLog, parent: string, list: string, fold: (child: strin
 
 /** Names of the entity's fields with a prefix, sorted, those that no object can carry left out. */
 function fieldsUnder(log: FactLog, entity: string, prefix: string): string[] {
-  return [...(log.entities.get(entity)?.keys() ?? [])]
-    .filter((field) => field.startsWith(prefix) && !isReservedKey(field.slice(prefix.length)))
-    .sort()
+  const fields: string[] = []
+  for (const field of log.entities.get(entity)?.keys() ?? [])
+    if (field.startsWith(prefix) && !isReservedKey(field.slice(prefix.length))) fields.push(field)
+  return fields.length > 1 ? fields.sort() : fields
 }
 
 /** Heads that say the same are one version. */

@@ -104,8 +104,17 @@ export function mergeFacts(log: FactLog, facts: readonly unknown[]): Merged {
     if (refusal) merged.refused.push(refusal)
     else readable.push(fact as Fact)
   }
-  readable.sort((a, b) => (a.device === b.device ? a.n - b.n : a.device < b.device ? -1 : 1))
-  for (const fact of readable) {
+  return takeInOrder(log, readable, merged)
+}
+
+/** As `mergeFacts`, for facts that went through its gate before: what this phone's own store kept. */
+export function loadFacts(log: FactLog, facts: readonly Fact[]): Merged {
+  return takeInOrder(log, [...facts], { added: [], refused: [] })
+}
+
+function takeInOrder(log: FactLog, facts: Fact[], merged: Merged): Merged {
+  facts.sort((a, b) => (a.device === b.device ? a.n - b.n : a.device < b.device ? -1 : 1))
+  for (const fact of facts) {
     const known = log.devices.get(fact.device) ?? []
     const same = known[fact.n - 1]
     if (same) {

@@ -96,7 +96,18 @@ export function fieldOfKey(key: string): string {
 
 /** The view's key that a field is shown as, or null where the field is no plain one. */
 export function keyOfField(field: string): string | null {
+  if (!field.includes('/')) return structural.has(field) || composed.has(field) ? null : field
   if (field.startsWith('own/')) return field.slice(4)
-  if (structural.has(field) || composed.has(field)) return null
-  return /^(word|state|photo)\//.test(field) ? null : field
+  return field.startsWith('word/') || field.startsWith('state/') || field.startsWith('photo/') ? null : field
+}
+
+const required = new WeakMap<object, readonly string[]>()
+
+/** Plain keys without which a view of that shape is none. */
+export function requiredKeys({ schema: { entries } }: Shape): readonly string[] {
+  const known = required.get(entries)
+  if (known) return known
+  const keys = Object.keys(entries).filter((key) => keyOfField(key) !== null && entries[key]?.type !== 'exact_optional')
+  required.set(entries, keys)
+  return keys
 }

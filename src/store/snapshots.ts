@@ -1,5 +1,5 @@
 import type { Fact } from '../record/facts.ts'
-import { allFacts, emptyLog, type FactLog, mergeFacts, seenBy } from '../record/log.ts'
+import { allFacts, emptyLog, type FactLog, loadFacts, seenBy } from '../record/log.ts'
 import type { Database } from './database.ts'
 import { factsAfter } from './facts.ts'
 
@@ -10,7 +10,7 @@ const worthwhile = 400
 export async function openLog(database: Database, survey: string, device: string): Promise<FactLog> {
   const log = emptyLog(survey, device)
   const snapshot = await database.get('snapshots', survey)
-  if (snapshot) mergeFacts(log, JSON.parse(snapshot.facts) as Fact[])
+  if (snapshot) loadFacts(log, JSON.parse(snapshot.facts) as Fact[])
   const newer = await catchUp(database, log)
   if (newer.length > worthwhile) await keepSnapshot(database, log)
   return log
@@ -18,7 +18,7 @@ export async function openLog(database: Database, survey: string, device: string
 
 /** Takes into the log what the store holds beyond it (another tab's, another phone's); returns that. */
 export async function catchUp(database: Database, log: FactLog): Promise<Fact[]> {
-  const { added } = mergeFacts(log, await factsAfter(database, log.survey, new Map(seenBy(log))))
+  const { added } = loadFacts(log, await factsAfter(database, log.survey, new Map(seenBy(log))))
   return added
 }
 
