@@ -1,7 +1,8 @@
-import type { FactDraft } from '../../src/record/facts.ts'
-import { appendDrafts, emptyLog, type FactLog } from '../../src/record/log.ts'
+import type { Fact, FactDraft } from '../../src/record/facts.ts'
+import { foldSurvey } from '../../src/record/fold.ts'
+import { allFacts, appendDrafts, emptyLog, type FactLog, mergeFacts } from '../../src/record/log.ts'
 import { addReading, addSegment, addWalk, addZone, nameVenue } from '../../src/record/operations/index.ts'
-import type { Reading } from '../../src/record/survey.ts'
+import type { Reading, Segment } from '../../src/record/survey.ts'
 
 /** A phone in a test: its log, its own clock, and the person who holds it. */
 export interface Phone {
@@ -15,11 +16,11 @@ export function phone(device: string, person = device): Phone {
 }
 
 /** Does one named operation on a phone, as the app does: drafts from the log as it stands, then stamped. */
-export function act(on: Phone, operation: (log: FactLog) => FactDraft[]): void {
+export function act(on: Phone, operation: (log: FactLog) => FactDraft[]): Fact[] {
   const second = String(on.tick++ % 60).padStart(2, '0')
   const minute = String(Math.floor(on.tick / 60) % 60).padStart(2, '0')
   const stamp = { device: on.log.device, clock: `2026-03-01T10:${minute}:${second}.000Z`, person: on.person }
-  appendDrafts(on.log, operation(on.log), stamp)
+  return appendDrafts(on.log, operation(on.log), stamp)
 }
 
 /** A tape reading of one metre unless told otherwise. */
@@ -37,4 +38,25 @@ export function smallVenue(device = 'a', person = 'Ada'): Phone {
   act(one, (log) => addSegment(log, 'w', { id: 's2', name: 'Corridor', zone: 'z', ledBy: 'robot' }))
   act(one, (log) => addReading(log, 's1', 'length', tape('s1-length', 12)))
   return one
+}
+
+/** Another phone that has everything the first one has. */
+export function copyOf(one: Phone, device: string, person: string): Phone {
+  const other = phone(device, person)
+  mergeFacts(other.log, allFacts(one.log))
+  return { ...other, tick: one.tick }
+}
+
+/** Each phone takes in what the others have. */
+export function exchange(...phones: Phone[]): void {
+  const facts = phones.map((one) => allFacts(one.log))
+  for (const one of phones) {
+    const { refused } = mergeFacts(one.log, facts.flat())
+    if (refused.length > 0) throw new Error(JSON.stringify(refused[0]))
+  }
+}
+
+/** The segments of the first walk as the phone shows them. */
+export function segmentsOf(one: Phone): Segment[] {
+  return foldSurvey(one.log).view.walks[0]?.segments ?? []
 }
