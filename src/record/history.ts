@@ -46,9 +46,9 @@ export function reverseStep(log: FactLog, step: Step): Reversal {
   const drafts: FactDraft[] = []
   for (const fact of facts.toReversed()) {
     if (made.has(fact.entity)) continue
-    const changed = replacedBy(log, fact)
-    if (changed) return refused(step, changed.person ?? 'somebody')
-    drafts.push(...restoring(log, fact))
+    const { heads, others } = standingFor(log, fact, (one) => isOthers(one, fact, step))
+    if (others) return refused(step, others.person ?? 'somebody')
+    drafts.push(...restoring(log, fact, heads))
   }
   for (const entity of made) {
     const other = [...factsWithin(log, entity)].find((fact) => isOthers(fact, facts[0], step))
@@ -71,23 +71,33 @@ function isFirst(fact: Fact): boolean {
   return fact.replaces.length === 0
 }
 
-/** The fact that has taken this one's place, or null while it stands. */
-function replacedBy(log: FactLog, fact: Fact): Fact | null {
-  const id = factId(fact)
-  const heads = headsOf(log, fact.entity, fact.field)
-  if (heads.some((head) => factId(head) === id)) return null
-  return (
-    log.entities
-      .get(fact.entity)
-      ?.get(fact.field)
-      ?.facts.find((one) => one.replaces.includes(id)) ?? fact
-  )
+/**
+ * The heads that stand where `fact` put a value: itself, or what took its place in turn (an undo puts a value back by new
+ * facts). `others`: one of those that is somebody else's.
+ */
+function standingFor(
+  log: FactLog,
+  fact: Fact,
+  isOther: (fact: Fact) => boolean,
+): { heads: Fact[]; others: Fact | null } {
+  const slot = log.entities.get(fact.entity)?.get(fact.field)
+  const reached = new Set([factId(fact)])
+  const heads: Fact[] = []
+  for (const id of reached) {
+    const successors = slot?.facts.filter((one) => one.replaces.includes(id)) ?? []
+    const others = successors.find(isOther)
+    if (others) return { heads, others }
+    for (const one of successors) reached.add(factId(one))
+    const head = slot?.heads.find((one) => factId(one) === id)
+    if (head) heads.push(head)
+  }
+  return { heads, others: null }
 }
 
 /** What was there before `fact`: one draft for each value it replaced, so that rivals come back as rivals. */
-function restoring(log: FactLog, fact: Fact): FactDraft[] {
+function restoring(log: FactLog, fact: Fact, heads: readonly Fact[]): FactDraft[] {
   const { entity, field } = fact
-  const replaces = [factId(fact)]
+  const replaces = heads.map(factId)
   if (field === 'gone') return [goneDraft(log, entity, fact.value === false)]
   const before = fact.replaces.map((id) => factOf(log, id)).filter((one) => one !== undefined)
   if (before.length === 0) return [{ entity, field, value: null, replaces }]

@@ -51,7 +51,11 @@ export const factSchema = v.looseObject({
   survey: short,
   device: short,
   n: v.pipe(v.number(), v.safeInteger(), v.minValue(1)),
-  clock: v.pipe(v.string(), v.maxLength(40), v.regex(/^\d{4}-\d{2}-\d{2}T\d{2}:\d{2}/, 'a time like 2026-11-30T10:15:00Z')),
+  clock: v.pipe(
+    v.string(),
+    v.maxLength(40),
+    v.regex(/^\d{4}-\d{2}-\d{2}T\d{2}:\d{2}/, 'a time like 2026-11-30T10:15:00Z'),
+  ),
   person: v.exactOptional(v.pipe(v.string(), v.maxLength(400))),
   entity: short,
   field: short,

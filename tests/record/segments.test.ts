@@ -122,6 +122,17 @@ describe('answers of two people', () => {
   })
 })
 
+it('an answer that names nobody replaces the only one there is, and none of two', () => {
+  const one = smallVenue()
+  act(one, (log) => setWord(log, 's1', 'edge', swept('listed', 'Ada')))
+  act(one, (log) => setWord(log, 's1', 'edge', swept('none')))
+  expect(segmentsOf(one)[0]?.words['edge']).toMatchObject({ says: 'none' })
+  expect(segmentsOf(one)[0]?.words['edge']).not.toHaveProperty('rivals')
+  act(one, (log) => setWord(log, 's1', 'edge', swept('listed', 'Ben')))
+  act(one, (log) => setWord(log, 's1', 'edge', { ...swept('listed'), how: 'told' }))
+  expect(segmentsOf(one)[0]?.words['edge']?.rivals).toHaveLength(2)
+})
+
 describe('removing', () => {
   it('hides an entity with all in it, and restoring brings all of it back', () => {
     const one = smallVenue()

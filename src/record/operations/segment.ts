@@ -44,12 +44,12 @@ export function splitSegment(log: FactLog, segment: string, cut: SegmentFields &
   const walk = log.places.of.get(segment)
   if (!walk) throw new Error(`record/no-such-entity: ${segment}`)
   const { at, ...fields } = cut
-  const beyond = childrenOf(log.places, segment, 'features').filter((id) => alongOf(log, id) >= at)
+  const beyond = present(log, segment, 'features').filter((id) => alongOf(log, id) >= at)
   return [
     ...addSegment(log, walk.parent, fields, segment),
     ...moveAll(log, beyond, cut.id, 'features'),
     ...beyond.map((id) => setKey(log, id, 'along', alongOf(log, id) - at)),
-    ...moveAll(log, childrenOf(log.places, segment, 'turn'), cut.id, 'turn'),
+    ...moveAll(log, present(log, segment, 'turn'), cut.id, 'turn'),
     ...present(log, segment, 'readings/length').flatMap((id) => remove(log, id)),
   ]
 }
@@ -84,6 +84,7 @@ export function joinSegments(log: FactLog, first: string, second: string, length
   ]
 }
 
+/** Removed entities stay where they are: moving one would bring it back. */
 function present(log: FactLog, parent: string, list: string): string[] {
   return childrenOf(log.places, parent, list).filter((id) => !isGone(log, id))
 }
