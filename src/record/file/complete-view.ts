@@ -58,6 +58,15 @@ function completeNode(node: Node, shape: Shape, where: Where, attributeOf: Attri
   const children = (value: unknown, inList: string): unknown =>
     Array.isArray(value) ? value.map((one, i) => child(one, inList, String(i))) : value
   const full: Node = { ...node }
+  // A list would pass for a map with numbers as names.
+  for (const map of ['words', 'readings'])
+    if (Array.isArray(full[map]))
+      problems.push({
+        path: `${path}/${map}`,
+        expected: `${map} by name`,
+        found: 'a list',
+        whatToDo: 'Write an object: what is answered or measured, then its value.',
+      })
   if (shape.words) full.words ??= {}
   if (shape.states) full.states ??= []
   if (shape.readings) {

@@ -18,7 +18,12 @@ export function problemsOf(issues: readonly v.BaseIssue<unknown>[], under = ''):
     const inner = v.getDotPath(issue)?.replaceAll('.', '/') ?? ''
     const path = [under, inner].filter((part) => part !== '').join('/')
     const expected = expectationOf(issue)
-    return { path, expected, found: shorten(issue.received), whatToDo: `Write ${expected} there.` }
+    return {
+      path,
+      expected,
+      found: issue.received === 'undefined' ? 'nothing' : shorten(issue.received),
+      whatToDo: `Write ${expected} there.`,
+    }
   })
 }
 
