@@ -33,6 +33,18 @@ export const rooms = {
   },
   'sheets/html': { may: ['sheets/content', 'units'], instead: 'forms are peers: they share content/ alone.' },
   'sheets/text': { may: ['sheets/content', 'units'], instead: 'forms are peers: they share content/ alone.' },
+  'sheets/audio': { may: ['sheets/content', 'units'], instead: 'forms are peers: they share content/ alone.' },
+  'sheets/braille': { may: ['sheets/content', 'units'], instead: 'forms are peers: they share content/ alone.' },
+  'sheets/pdf': { may: ['sheets/content', 'units'], instead: 'forms are peers: they share content/ alone.' },
+  'sheets/word': { may: ['sheets/content', 'units'], instead: 'forms are peers: they share content/ alone.' },
+  'sheets/csv': {
+    may: ['sheets/content', 'units', 'record', 'catalogue', 'judge'],
+    instead: 'a table of readings lists what was recorded and judged: it works nothing out.',
+  },
+  'sheets/geo': {
+    may: ['sheets/content', 'units', 'geometry', 'record', 'catalogue', 'plan', 'judge'],
+    instead: 'the map form draws the plan and the verdicts as they are: it works nothing out.',
+  },
   store: { may: ['units', 'record'], instead: 'store/ keeps bytes: a page reaches it through app/state.' },
   workers: {
     may: ['units', 'geometry', 'record', 'catalogue', 'standards', 'plan', 'leash', 'judge', 'sheets'],
@@ -49,7 +61,7 @@ export const rooms = {
   },
 }
 
-/** Package (or its scope) -> the rooms that own it. */
+/** Package (or its scope) -> the rooms that own it, with the rooms within them. */
 export const owners = {
   valibot: ['record'],
   '@valibot/to-json-schema': ['record'],
@@ -58,6 +70,9 @@ export const owners = {
   '@preact/signals': ['app'],
   'preact-iso': ['app'],
   leaflet: ['app'],
+  pdfkit: ['sheets/pdf'],
+  docx: ['sheets/word'],
+  'liblouis-build': ['sheets/braille'],
   'workbox-window': ['app'],
   'workbox-precaching': ['service-worker'],
   'workbox-routing': ['service-worker'],
@@ -100,7 +115,11 @@ export function inspect(root) {
         const owned = Object.entries(owners).find(([name]) => matchesPackage(specifier, name))
         if (!owned && !specifier.startsWith('virtual:') && !(file === 'app/vite.config.ts'))
           breaches.push(`${file} -> ${specifier}: give the package an owner in scripts/layers.mjs`)
-        if (owned && !owned[1].includes(room.split('/')[0]) && file !== 'app/vite.config.ts')
+        if (
+          owned &&
+          !owned[1].some((owner) => room === owner || room.startsWith(`${owner}/`)) &&
+          file !== 'app/vite.config.ts'
+        )
           breaches.push(`${file} -> ${specifier}: only ${owned[1].join(', ')}/ may import it`)
       }
     }

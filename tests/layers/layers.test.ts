@@ -25,6 +25,7 @@ describe('a planted breach is found', () => {
     ['a page that calls the planner by a dynamic import', /^app\/screens\/solves\.ts -> leash\/clearance\.ts/],
     ['a page that starts a worker past the bridge', /^app\/screens\/starts-worker\.ts -> workers\/judge\.worker\.ts/],
     ['a package used outside its owner', /^judge\/owns-idb\.ts -> idb: only store\//],
+    ['a package of one sheet form in another', /^sheets\/text\/takes-pdfkit\.ts -> pdfkit: only sheets\/pdf\//],
     ['a package without an owner', /^store\/unowned\.ts -> left-pad/],
     ['one sheet form that borrows from another', /^sheets\/text\/borrows\.ts -> sheets\/html\/form\.ts/],
     ['a cycle', /^cycle: geometry\/circle\.ts -> geometry\/turn\.ts -> geometry\/circle\.ts/],
