@@ -1,5 +1,17 @@
 import type * as v from 'valibot'
-import { feature, floor, observation, override, place, reading, segment, surveyView, walk, zone } from './survey.ts'
+import {
+  feature,
+  floor,
+  observation,
+  override,
+  place,
+  reading,
+  type StateMark,
+  segment,
+  surveyView,
+  walk,
+  zone,
+} from './survey.ts'
 
 /**
  * How each kind of entity is written in facts: which of its view's keys are plain fields, and which are lists of
@@ -92,6 +104,11 @@ const structural = new Set(['in', 'gone', 'reading', 'override', 'photos'])
 /** The field in which a view's key is kept: itself, or under `own/` where the log has another use for the name. */
 export function fieldOfKey(key: string): string {
   return structural.has(key) || composed.has(key) || key.includes('/') ? `own/${key}` : key
+}
+
+/** The field of a walk's state mark. Marks of the same state, day and name share one: marking twice is one mark. */
+export function fieldOfMark({ state, date, name }: StateMark): string {
+  return `state/${state}/${date}/${name}`.slice(0, 400)
 }
 
 /** The view's key that a field is shown as, or null where the field is no plain one. */

@@ -1,8 +1,7 @@
 import type { FactDraft } from '../facts.ts'
-import { stateField } from '../operations/walk.ts'
 import { type OrderKey, orderBetween } from '../order.ts'
 import { root } from '../placement.ts'
-import { fieldOfKey, rootShape, type Shape, shapeOf } from '../shapes.ts'
+import { fieldOfKey, fieldOfMark, rootShape, type Shape, shapeOf } from '../shapes.ts'
 import type { Answer, StateMark, SurveyView } from '../survey.ts'
 
 type Node = Record<string, unknown>
@@ -25,7 +24,7 @@ function draftsWithin(entity: string, node: Node, shape: Shape, device: string):
     else if (key === 'readings' && shape.readings)
       for (const [quantity, taken] of Object.entries(value as Node))
         drafts.push(...draftsOfList(entity, `readings/${quantity}`, taken, device))
-    else if (key === 'states' && shape.states) for (const mark of value as StateMark[]) put(stateField(mark), mark)
+    else if (key === 'states' && shape.states) for (const mark of value as StateMark[]) put(fieldOfMark(mark), mark)
     else if (key === 'photos' && shape.photos) for (const photo of value as string[]) put(`photo/${photo}`, true)
     else put(fieldOfKey(key), value)
   }

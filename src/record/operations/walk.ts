@@ -1,6 +1,7 @@
 import type { FactDraft } from '../facts.ts'
 import type { FactLog } from '../log.ts'
 import { root } from '../placement.ts'
+import { fieldOfMark } from '../shapes.ts'
 import type { Answer, Help, Override, StateMark, Walk } from '../survey.ts'
 import { setWord } from './answer.ts'
 import { create, set, setKey } from './draft.ts'
@@ -27,12 +28,7 @@ export function setAlarm(log: FactLog, walk: string, help: Help | undefined): Fa
 
 /** Adds a mark to the walk's history of states; marks are never overwritten. */
 export function markState(log: FactLog, walk: string, mark: StateMark): FactDraft[] {
-  return [set(log, walk, stateField(mark), mark)]
-}
-
-/** Marks of the same state, day and name share a field: marking twice is one mark. */
-export function stateField({ state, date, name }: StateMark): string {
-  return `state/${state}/${date}/${name}`.slice(0, 400)
+  return [set(log, walk, fieldOfMark(mark), mark)]
 }
 
 /** A practitioner's last word on a segment, in the open. */

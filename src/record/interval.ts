@@ -1,0 +1,144 @@
+import { type Instrument, instrument } from './instruments.ts'
+import type { Reading } from './survey.ts'
+
+/**
+ * What the readings of one quantity say together. Never a mean: repeats at one place keep the one at the unsafe end;
+ * several people's repeats join from the least unsafe end to the greatest safe end; of several places along a stretch
+ * the worst rules.
+ */
+export interface Interval {
+  /** The ends in the quantity's SI unit; -Infinity or Infinity beyond a bound. low <= value <= high. */
+  low: number
+  value: number
+  high: number
+  /** The end that a limit of the team uses, and the other. */
+  unsafe: number
+  safe: number
+  /** Readings of one place lie further apart than their joint uncertainty and nobody has settled them. */
+  differs: boolean
+  /** Nobody measured: every reading that counts was told or by eye. */
+  told: boolean
+  /** A sweep confirmed more quickly than a person walks. */
+  tooQuick: boolean
+  /** Ids of the readings that count. */
+  ids: string[]
+}
+
+/** Changed uncertainties by instrument, as a survey has them. */
+export type Changed = Readonly<Record<string, { absolute: number; relative: number }>>
+
+export interface IntervalOptions {
+  /** The end at which the quantity does harm: 'low' for what there is (a clear width), 'high' for what is in the way. */
+  unsafe: 'low' | 'high'
+  changed?: Changed | undefined
+  /** Readings taken as known exactly at this value, by id: a judgement "if the truth were at this end". */
+  pins?: ReadonlyMap<string, number> | undefined
+}
+
+/** Expanded uncertainty (k = 2) of one reading, in its SI unit. An unknown instrument counts as told. */
+export function uncertainty(reading: Pick<Reading, 'instrument' | 'value'>, changed: Changed = {}): number {
+  const row = changed[reading.instrument] ?? instrument(reading.instrument) ?? (instrument('told') as Instrument)
+  return row.absolute + row.relative * Math.abs(reading.value)
+}
+
+/** The joined interval, or null where there is no reading that counts. A value that is no number breaks a promise: throws. */
+export function interval(readings: readonly Reading[] | undefined, options: IntervalOptions): Interval | null {
+  const settled = new Set((readings ?? []).flatMap((one) => (isAct(one) ? one.settles.readings : [])))
+  const places: Reading[][] = []
+  for (const one of readings ?? []) {
+    if (Number.isNaN(one.value)) throw new Error(`record/no-number: reading ${one.id}`)
+    const here = places.at(-1)
+    if (here && one.place !== 'another') here.push(one)
+    else places.push([one])
+  }
+  const counted = places
+    .map((place) => place.filter((one) => !settled.has(one.id)))
+    .filter((place) => place.length > 0)
+    .map((place) => joined(place, options))
+  if (counted.length === 0) return null
+  return counted.reduce((worst, next) => worse(worst, next, options.unsafe))
+}
+
+/** A reading replaces others only by a named person's act with a reason. */
+function isAct(one: Reading): one is Reading & { settles: NonNullable<Reading['settles']> } {
+  return Boolean(one.settles && one.settles.by.trim() && one.settles.reason.trim())
+}
+
+interface Span {
+  low: number
+  value: number
+  high: number
+  /** Expanded uncertainty. */
+  u: number
+}
+
+function span(one: Reading, { unsafe, changed, pins }: IntervalOptions): Span {
+  const pin = pins?.get(one.id)
+  const u = pin === undefined ? uncertainty(one, changed) : 0
+  const value = pin ?? one.value
+  const low = one.bound === 'below' ? Number.NEGATIVE_INFINITY : value - u
+  const high = one.bound === 'above' ? Number.POSITIVE_INFINITY : value + u
+  if (!one.safeSide) return { low, value, high, u }
+  const end = unsafe === 'low' ? low : high
+  return Number.isFinite(end) ? { low: end, value: end, high: end, u: 0 } : { low, value, high, u }
+}
+
+/** One place: every reading there, whoever took it. */
+function joined(place: readonly Reading[], options: IntervalOptions): Interval {
+  const spans = place.map((one) => ({ one, at: span(one, options) }))
+  const sign = options.unsafe === 'low' ? 1 : -1
+  const order = (s: Span) => (options.unsafe === 'low' ? s.low : -s.high)
+  // Each person's repeats: the unsafe-most speaks for that person, with its own uncertainty.
+  const speakers = new Map<string, { one: Reading; at: Span }>()
+  for (const next of spans) {
+    const name = next.one.person ?? ''
+    const known = speakers.get(name)
+    if (!known || order(next.at) < order(known.at)) speakers.set(name, next)
+  }
+  const worst = spans.reduce((a, b) => (order(b.at) < order(a.at) ? b : a))
+  const apart = spans.some((a) => spans.some((b) => disagree(a.one, a.at, b.one, b.at)))
+  // "Take the safe side" of the unsafe-most reading settles the place there.
+  const settled = worst.one.safeSide === true
+  const heard = apart && !settled ? spans : settled ? [worst] : [...speakers.values()]
+  const low = Math.min(...heard.map(({ at }) => at.low))
+  const high = Math.max(...heard.map(({ at }) => at.high))
+  return {
+    low,
+    high,
+    value: worst.at.value,
+    unsafe: sign > 0 ? low : high,
+    safe: sign > 0 ? high : low,
+    differs: apart && !settled,
+    told: place.every((one) => instrument(one.instrument)?.hearsay === true || !instrument(one.instrument)),
+    tooQuick: place.some((one) => one.tooQuick === true),
+    ids: place.map((one) => one.id),
+  }
+}
+
+/** Beyond the root of the sum of squares two readings of one place differ; two bounds never do. */
+function disagree(a: Reading, atA: Span, b: Reading, atB: Span): boolean {
+  const joint = Math.hypot(atA.u, atB.u) + 1e-9
+  if (a.bound === 'exact' && b.bound === 'exact') return Math.abs(atA.value - atB.value) > joint
+  if (a.bound === 'above' && b.bound !== 'above') return atB.value < atA.value - joint
+  if (a.bound === 'below' && b.bound !== 'below') return atB.value > atA.value + joint
+  return false
+}
+
+/** The worst of two places, end by end; what differs or was told at either stays said. */
+function worse(a: Interval, b: Interval, unsafe: 'low' | 'high'): Interval {
+  const pick = unsafe === 'low' ? Math.min : Math.max
+  const low = pick(a.low, b.low)
+  const high = pick(a.high, b.high)
+  const rules = (unsafe === 'low' ? b.low < a.low : b.high > a.high) ? b : a
+  return {
+    low,
+    high,
+    value: pick(a.value, b.value),
+    unsafe: unsafe === 'low' ? low : high,
+    safe: unsafe === 'low' ? high : low,
+    differs: a.differs || b.differs,
+    told: a.told || b.told,
+    tooQuick: a.tooQuick || b.tooQuick,
+    ids: rules === a ? [...a.ids, ...b.ids] : [...b.ids, ...a.ids],
+  }
+}
