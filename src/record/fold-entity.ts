@@ -1,12 +1,12 @@
 import * as v from 'valibot'
 import { type Fact, factId } from './facts.ts'
 import { foldAnswer, signed } from './fold-answer.ts'
-import { isReservedKey, sameJson } from './json.ts'
+import { canonical, isReservedKey } from './json.ts'
 import { type FactLog, headsOf } from './log.ts'
 import { childrenOf, listsOf, root } from './placement.ts'
 import { presenceOf } from './presence.ts'
 import { keyOfField, requiredKeys, rootShape, type Shape, shapeOf } from './shapes.ts'
-import { compareFacts } from './slot.ts'
+import { compareFacts, headsIn } from './slot.ts'
 import {
   type Answer,
   type Conflict,
@@ -84,8 +84,8 @@ type Aside = (field: string, expected: string, found: string) => void
 function foldFields(log: FactLog, entity: string, shape: Shape, issues: Issues, aside: Aside): Node | null {
   const { entries } = shape.schema
   const node: Node = { ...(entity === root ? {} : { id: entity }), ...shape.defaults }
-  for (const [field, { heads }] of log.entities.get(entity) ?? []) {
-    const distinct = withoutEchoes(heads)
+  for (const [field, slot] of log.entities.get(entity) ?? []) {
+    const distinct = withoutEchoes(headsIn(slot))
     if (field === 'in' && distinct.length > 1) issues.conflicts.push(conflict(entity, field, distinct))
     const key = keyOfField(field)
     const value = distinct[0]?.value
@@ -120,10 +120,12 @@ function foldWhole(log: FactLog, entity: string, shape: Shape, issues: Issues, a
   if (written.length > 1) issues.conflicts.push(conflict(entity, field, written))
   const value = fact.value as object
   const node: Node = { ...(shape.schema === readingSchema ? signed(value, fact) : value), id: entity }
-  for (const [name, { heads }] of slots ?? []) {
+  for (const [name, slot] of slots ?? []) {
     const key = keyOfField(name)
-    if (key !== null && key !== 'id' && !isReservedKey(key) && heads[0] && heads[0].value !== null)
-      node[key] = heads[0].value
+    const value = headsIn(slot)[0]?.value ?? null
+    if (key === null || value === null || isReservedKey(key)) continue
+    // What was read stays as it was read.
+    if (!Object.hasOwn(node, key) || key === 'safeSide' || key === 'place') node[key] = value
   }
   const read = v.safeParse(shape.schema as unknown as v.GenericSchema, node)
   if (read.success) return node
@@ -191,7 +193,11 @@ function fieldsUnder(log: FactLog, entity: string, prefix: string): string[] {
 /** Heads that say the same are one version. */
 function withoutEchoes(heads: readonly Fact[]): readonly Fact[] {
   if (heads.length < 2) return heads
-  return heads.filter((head, i) => heads.findIndex((one) => sameJson(one.value, head.value)) === i)
+  const said = new Set<string>()
+  return heads.filter(({ value }) => {
+    const text = canonical(value)
+    return !said.has(text) && said.add(text)
+  })
 }
 
 function conflict(entity: string, field: string, heads: readonly Fact[]): Conflict {

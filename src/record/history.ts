@@ -88,7 +88,7 @@ function standingFor(
     const others = successors.find(isOther)
     if (others) return { heads, others }
     for (const one of successors) reached.add(factId(one))
-    const head = slot?.heads.find((one) => factId(one) === id)
+    const head = headsOf(log, fact.entity, fact.field).find((one) => factId(one) === id)
     if (head) heads.push(head)
   }
   return { heads, others: null }

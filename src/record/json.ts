@@ -56,6 +56,14 @@ export function sameJson(a: unknown, b: unknown): boolean {
   )
 }
 
+/** The value as a text that does not depend on the order of keys. */
+export function canonical(value: unknown): string {
+  if (typeof value !== 'object' || value === null) return JSON.stringify(value) ?? 'null'
+  if (Array.isArray(value)) return `[${value.map(canonical).join(',')}]`
+  const entries = Object.entries(value).sort(([a], [b]) => (a < b ? -1 : 1))
+  return `{${entries.map(([key, one]) => `${JSON.stringify(key)}:${canonical(one)}`).join(',')}}`
+}
+
 function join(path: string, key: string): string {
   return path === '' ? key : `${path}/${key}`
 }

@@ -2,7 +2,7 @@ import * as v from 'valibot'
 import { type Fact, type FactDraft, type FactId, factId } from './facts.ts'
 import { jsonFault, sameJson } from './json.ts'
 import { emptyPlaces, type Places, place, readPlacement } from './placement.ts'
-import { addToSlot, emptySlot, type Slot } from './slot.ts'
+import { addToSlot, emptySlot, headsIn, type Slot } from './slot.ts'
 
 /**
  * The facts of one survey in memory. It grows in place and forgets nothing; a view folded from it never changes.
@@ -78,6 +78,7 @@ export function appendDrafts(log: FactLog, drafts: readonly FactDraft[], stamp: 
   let n = log.devices.get(stamp.device)?.length ?? 0
   const facts = drafts.map((draft) => stampDraft(log.survey, draft, stamp, ++n))
   for (const fact of facts) take(log, fact)
+  placeAnew(log, facts)
   return facts
 }
 
@@ -130,12 +131,14 @@ function takeInOrder(log: FactLog, facts: Fact[], merged: Merged): Merged {
       merged.added.push(fact)
     }
   }
+  placeAnew(log, merged.added)
   return merged
 }
 
 /** Facts of one field that nobody has replaced: none, one, or rivals. */
 export function headsOf(log: FactLog, entity: string, field: string): readonly Fact[] {
-  return log.entities.get(entity)?.get(field)?.heads ?? []
+  const slot = log.entities.get(entity)?.get(field)
+  return slot ? headsIn(slot) : []
 }
 
 /** The value of a field, the first of its rivals where there are several; undefined where nobody gave one. */
@@ -169,12 +172,19 @@ function take(log: FactLog, fact: Fact): void {
   slots.set(fact.field, slot)
   addToSlot(slot, fact)
   log.touched.add(fact.entity)
-  if (fact.field !== 'in') return
-  const before = log.places.of.get(fact.entity)
-  if (before) log.touched.add(before.parent)
-  const placement = slot.heads.map((head) => readPlacement(head.value)).find((one) => one !== null) ?? null
-  place(log.places, fact.entity, placement)
-  if (placement) log.touched.add(placement.parent)
+}
+
+/** Puts the entities that new facts have placed where those say. */
+function placeAnew(log: FactLog, facts: readonly Fact[]): void {
+  const moved = new Set(facts.filter((fact) => fact.field === 'in').map((fact) => fact.entity))
+  for (const entity of moved) {
+    const before = log.places.of.get(entity)
+    if (before) log.touched.add(before.parent)
+    const placements = headsOf(log, entity, 'in').map((head) => readPlacement(head.value))
+    const placement = placements.find((one) => one !== null) ?? null
+    place(log.places, entity, placement)
+    if (placement) log.touched.add(placement.parent)
+  }
 }
 
 function malformed(log: FactLog, fact: unknown): Refused | null {

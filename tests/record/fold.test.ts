@@ -1,7 +1,8 @@
 import * as v from 'valibot'
 import { describe, expect, it } from 'vitest'
+import { factId } from '../../src/record/facts.ts'
 import { foldSurvey } from '../../src/record/fold.ts'
-import { appendDrafts, emptyLog } from '../../src/record/log.ts'
+import { appendDrafts, emptyLog, headsOf } from '../../src/record/log.ts'
 import {
   addFeature,
   addPhoto,
@@ -92,6 +93,19 @@ describe('the folded view', () => {
     const one = smallVenue()
     act(one, (log) => takeSafeSide(log, 's1-length'))
     expect(segmentsOf(one)[0]?.readings['length']?.[0]).toMatchObject({ ...tape('s1-length', 12), safeSide: true })
+  })
+
+  it('shows a reading as it was read, whatever facts stand beside it', () => {
+    const one = smallVenue()
+    const before = segmentsOf(one)[0]?.readings['length']?.[0]
+    const written = headsOf(one.log, 's1-length', 'reading').map(factId)
+    act(one, () => [
+      { entity: 's1-length', field: 'value', value: 99, replaces: [] },
+      { entity: 's1-length', field: 'raw', value: '99 m', replaces: [] },
+      { entity: 's1-length', field: 'reading', value: tape('s1-length', 99), replaces: written },
+    ])
+    expect(segmentsOf(one)[0]?.readings['length']?.[0]).toEqual(before)
+    expect(foldSurvey(one.log).conflicts).toMatchObject([{ entity: 's1-length', field: 'reading' }])
   })
 
   it('keeps fields of a later version in view, and sets aside values it cannot read', () => {
