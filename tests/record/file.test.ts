@@ -103,10 +103,10 @@ describe('a view written by hand', () => {
     const { survey } = read(byHand)
     const [first] = survey.view.walks[0]?.segments ?? []
     expect(survey.survey).toBe('hall')
-    expect(first?.readings['length']).toEqual([
+    expect(first?.readings.length).toEqual([
       { id: 's1/readings/length/0', raw: '12.4 m', instrument: 'tape-in-lays', value: 12.4, bound: 'exact' },
     ])
-    expect(first?.readings['width']).toMatchObject([
+    expect(first?.readings.width).toMatchObject([
       // 48.375 in x 0.0254
       { value: 1.228725, bound: 'exact', at: 'lockers' },
       { value: 2.1, bound: 'above' },
@@ -125,13 +125,13 @@ describe('a view written by hand', () => {
 
   it('gives nobody and no time where it names none', () => {
     const [first] = read(byHand).survey.view.walks[0]?.segments ?? []
-    expect(first?.readings['length']?.[0]).not.toHaveProperty('time')
-    expect(first?.words['edge']).not.toHaveProperty('time')
+    expect(first?.readings.length?.[0]).not.toHaveProperty('time')
+    expect(first?.words.edge).not.toHaveProperty('time')
   })
 
   it('keeps a dispute that it states', () => {
     const { survey } = read(byHand)
-    expect(survey.view.walks[0]?.segments[0]?.words['edge']).toMatchObject({
+    expect(survey.view.walks[0]?.segments[0]?.words.edge).toMatchObject({
       says: 'none',
       rivals: [{ says: 'listed', person: 'Ben' }],
     })

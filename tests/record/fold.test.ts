@@ -67,7 +67,7 @@ describe('the folded view', () => {
     act(one, (log) => markState(log, 'w', { state: 'judged', name: 'Ada', date: '2026-03-02' }))
     act(one, (log) => markState(log, 'w', { state: 'surveyed', name: 'Ada', date: '2026-03-01' }))
     const { view } = foldSurvey(one.log)
-    expect(view.zones[0]?.words['allowed']).toMatchObject({ says: 'allowed', role: 'manager' })
+    expect(view.zones[0]?.words.allowed).toMatchObject({ says: 'allowed', role: 'manager' })
     expect(view.zones[0]?.observations[0]).toMatchObject({
       id: 'o',
       from: '09:00',
@@ -92,19 +92,19 @@ describe('the folded view', () => {
   it('marks a reading settled at its safe side without changing it', () => {
     const one = smallVenue()
     act(one, (log) => takeSafeSide(log, 's1-length'))
-    expect(segmentsOf(one)[0]?.readings['length']?.[0]).toMatchObject({ ...tape('s1-length', 12), safeSide: true })
+    expect(segmentsOf(one)[0]?.readings.length?.[0]).toMatchObject({ ...tape('s1-length', 12), safeSide: true })
   })
 
   it('shows a reading as it was read, whatever facts stand beside it', () => {
     const one = smallVenue()
-    const before = segmentsOf(one)[0]?.readings['length']?.[0]
+    const before = segmentsOf(one)[0]?.readings.length?.[0]
     const written = headsOf(one.log, 's1-length', 'reading').map(factId)
     act(one, () => [
       { entity: 's1-length', field: 'value', value: 99, replaces: [] },
       { entity: 's1-length', field: 'raw', value: '99 m', replaces: [] },
       { entity: 's1-length', field: 'reading', value: tape('s1-length', 99), replaces: written },
     ])
-    expect(segmentsOf(one)[0]?.readings['length']?.[0]).toEqual(before)
+    expect(segmentsOf(one)[0]?.readings.length?.[0]).toEqual(before)
     expect(foldSurvey(one.log).conflicts).toMatchObject([{ entity: 's1-length', field: 'reading' }])
   })
 
@@ -117,8 +117,8 @@ describe('the folded view', () => {
     act(one, (log) => setSegmentField(log, 's2', 'zone', 17))
     put('s2', 'word/edge', { says: 'none', how: 'guessed' })
     const { view, setAside } = foldSurvey(one.log)
-    expect(view.walks[0]?.segments[0]?.['floorMarking']).toEqual({ colour: 'yellow' })
-    expect(view['opening']).toBeNull()
+    expect(view.walks[0]?.segments[0]?.floorMarking).toEqual({ colour: 'yellow' })
+    expect(view.opening).toBeNull()
     expect(view.walks[0]?.segments[1]?.words).toEqual({})
     expect(setAside?.map(({ entity, field }) => [entity, field])).toEqual([
       ['s2', 'zone'],
@@ -144,7 +144,7 @@ describe('the folded view', () => {
     act(one, (log) => addReading(log, 's1', '__proto__', tape('p')))
     const segment = segmentsOf(one)[0]
     expect(Object.getPrototypeOf(segment)).toBe(Object.prototype)
-    expect([segment?.id, segment?.words, ({} as Record<string, unknown>)['polluted']]).toEqual(['s1', {}, undefined])
+    expect([segment?.id, segment?.words, ({} as Record<string, unknown>).polluted]).toEqual(['s1', {}, undefined])
     expect(Object.keys(segment?.readings ?? {})).toEqual(['length'])
   })
 

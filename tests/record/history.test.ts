@@ -98,7 +98,7 @@ describe('undo and redo', () => {
         }
         expect(turnBack(at, 'redo')).toBeNull()
       }),
-      { seed: 20_260_303, numRuns: process.env['TAUTLINE_LONG'] === '1' ? 1000 : 100 },
+      { seed: 20_260_303, numRuns: process.env.TAUTLINE_LONG === '1' ? 1000 : 100 },
     )
   })
 
@@ -118,11 +118,11 @@ describe('undo and redo', () => {
     act(ben, (log) => setWord(log, 's1', 'edge', { says: 'listed', how: 'swept', person: 'Ben' }))
     exchange(ada, ben)
     const at = desk(ada)
-    const before = segmentsOf(ada)[0]?.words['edge']
+    const before = segmentsOf(ada)[0]?.words.edge
     commit(at, 'settle', (log) => settleAnswer(log, 's1', 'edge', { says: 'listed', how: 'swept' }))
     turnBack(at, 'undo')
     expect(headsOf(ada.log, 's1', 'word/edge')).toHaveLength(2)
-    expect(segmentsOf(ada)[0]?.words['edge']).toEqual(before)
+    expect(segmentsOf(ada)[0]?.words.edge).toEqual(before)
   })
 
   it('are refused where somebody else has replaced the value since, and change nothing', () => {

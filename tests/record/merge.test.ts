@@ -8,7 +8,7 @@ import type { Survey } from '../../src/record/survey.ts'
 import { act, copyOf, exchange, smallVenue, tape } from './build.ts'
 
 const seed = 20_260_302
-const long = process.env['TAUTLINE_LONG'] === '1'
+const long = process.env.TAUTLINE_LONG === '1'
 const numRuns = long ? 2000 : 200
 
 const devices = ['a', 'b', 'c'] as const

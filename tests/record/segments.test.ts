@@ -63,7 +63,7 @@ describe('splitting and joining', () => {
     const [first, second] = segmentsOf(one)
     expect(namesOf(one)).toEqual(['s1', 'new', 's2'])
     expect(first).toMatchObject({ words: { edge: { says: 'none' } }, readings: { width: [{ id: 'w1' }] } })
-    expect(first?.readings['length']).toBeUndefined()
+    expect(first?.readings.length).toBeUndefined()
     expect([first?.features.map((one) => one.id), first?.turn]).toEqual([['near'], undefined])
     expect(second).toMatchObject({ words: {}, readings: {}, turn: { id: 't' }, features: [{ id: 'far', along: 4 }] })
   })
@@ -79,8 +79,8 @@ describe('splitting and joining', () => {
     const [joined, ...others] = segmentsOf(one)
     expect(others).toEqual([])
     expect(Object.keys(joined?.words ?? {})).toEqual(['step'])
-    expect(joined?.readings['width']).toMatchObject([{ id: 'w1' }, { id: 'w2', place: 'another' }])
-    expect(joined?.readings['length']).toBeUndefined()
+    expect(joined?.readings.width).toMatchObject([{ id: 'w1' }, { id: 'w2', place: 'another' }])
+    expect(joined?.readings.length).toBeUndefined()
     expect(joined?.features.map((one) => [one.id, one.along])).toEqual([
       ['near', 2],
       ['far', 9],
@@ -105,7 +105,7 @@ describe('answers of two people', () => {
     expect(foldSurvey(ben.log).conflicts).toMatchObject([{ entity: 's1', field: 'word/edge' }])
     act(ben, (log) => settleAnswer(log, 's1', 'edge', swept('listed', 'Ben')))
     exchange(ada, ben)
-    expect(segmentsOf(ada)[0]?.words['edge']).toMatchObject({ says: 'listed', person: 'Ben' })
+    expect(segmentsOf(ada)[0]?.words.edge).toMatchObject({ says: 'listed', person: 'Ben' })
     expect(foldSurvey(ada.log).conflicts).toBeUndefined()
   })
 
@@ -113,12 +113,12 @@ describe('answers of two people', () => {
     const one = smallVenue()
     act(one, (log) => setWord(log, 's1', 'edge', swept('listed', 'Ada')))
     act(one, (log) => setWord(log, 's1', 'edge', swept('none', 'Ben')))
-    expect(segmentsOf(one)[0]?.words['edge']).toMatchObject({
+    expect(segmentsOf(one)[0]?.words.edge).toMatchObject({
       says: 'listed',
       rivals: [{ says: 'none', person: 'Ben' }],
     })
     act(one, (log) => setWord(log, 's1', 'edge', swept('listed', 'Ben')))
-    expect(segmentsOf(one)[0]?.words['edge']).not.toHaveProperty('rivals')
+    expect(segmentsOf(one)[0]?.words.edge).not.toHaveProperty('rivals')
   })
 })
 
@@ -126,11 +126,11 @@ it('an answer that names nobody replaces the only one there is, and none of two'
   const one = smallVenue()
   act(one, (log) => setWord(log, 's1', 'edge', swept('listed', 'Ada')))
   act(one, (log) => setWord(log, 's1', 'edge', swept('none')))
-  expect(segmentsOf(one)[0]?.words['edge']).toMatchObject({ says: 'none' })
-  expect(segmentsOf(one)[0]?.words['edge']).not.toHaveProperty('rivals')
+  expect(segmentsOf(one)[0]?.words.edge).toMatchObject({ says: 'none' })
+  expect(segmentsOf(one)[0]?.words.edge).not.toHaveProperty('rivals')
   act(one, (log) => setWord(log, 's1', 'edge', swept('listed', 'Ben')))
   act(one, (log) => setWord(log, 's1', 'edge', { ...swept('listed'), how: 'told' }))
-  expect(segmentsOf(one)[0]?.words['edge']?.rivals).toHaveLength(2)
+  expect(segmentsOf(one)[0]?.words.edge?.rivals).toHaveLength(2)
 })
 
 describe('removing', () => {
@@ -167,5 +167,5 @@ it('an amended reading names whom it settles, and the old one stays', () => {
   const one = smallVenue()
   const settles = { readings: ['s1-length'], by: 'Ada', reason: 'steel rule', on: '2026-03-01' }
   act(one, (log) => amendReading(log, 's1', 'length', tape('finer', 12.01), settles))
-  expect(segmentsOf(one)[0]?.readings['length']).toMatchObject([{ id: 's1-length' }, { id: 'finer', settles }])
+  expect(segmentsOf(one)[0]?.readings.length).toMatchObject([{ id: 's1-length' }, { id: 'finer', settles }])
 })
