@@ -66,7 +66,7 @@ export function finishAsBefore(part: Segment, before: Segment | undefined, now: 
   if (!before) return { refused: 'This is the first part: say its finish under Surface.' }
   if (part.zone !== undefined && before.zone !== part.zone)
     return { refused: 'Another zone: say its finish under Surface.' }
-  const finish = before.words['finish']
+  const finish = before.words.finish
   if (!finish || finish.says === 'unknown')
     return { refused: 'The finish of the part before is not known: say it under Surface.' }
   if (finish.time === undefined || now - Date.parse(finish.time) > asBeforeLasts)

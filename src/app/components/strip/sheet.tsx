@@ -54,6 +54,9 @@ export function Sheet(props: {
           Close
         </button>
       </header>
+      <p class={props.said?.failed ? 'said failed' : 'said'} role="status">
+        {props.said?.text ?? ''}
+      </p>
       {props.children}
     </dialog>
   )

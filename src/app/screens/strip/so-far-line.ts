@@ -1,0 +1,29 @@
+import type { SegmentResult } from '../../../judge/result.ts'
+import { type Aspect, aspects, aspectsLedOtherwise, type Item, items } from '../../../record/answers.ts'
+import type { Segment } from '../../../record/survey.ts'
+
+/** Aspects of a part that nobody has answered yet. */
+export function openAspects(segment: Segment): Aspect[] {
+  const asked = segment.ledBy === 'robot' ? aspects : aspectsLedOtherwise
+  return asked.filter((aspect) => {
+    if (aspect === 'length' || aspect === 'width') return (segment.readings[aspect] ?? []).length === 0
+    return (Object.keys(items) as Item[]).some((item) => items[item].aspect === aspect && !segment.words[item])
+  })
+}
+
+export const verdictWords = {
+  usable: 'usable',
+  'with-cautions': 'with cautions',
+  'with-help': 'with help',
+  'do-not-use': 'do not use',
+  'not-known': 'not known',
+} as const
+
+/** The top line. While answers are missing there is no verdict word; while a newer judgement is made neither. */
+export function soFarLine(segment: Segment, result: SegmentResult | undefined, stale: boolean): string {
+  const open = openAspects(segment)
+  if (open.length > 0)
+    return `So far: nothing against it; ${open.length} ${open.length === 1 ? 'answer' : 'answers'} left`
+  if (!result) return stale ? 'Judging' : 'Not judged yet'
+  return `${verdictWords[result.verdict]}${stale ? ', being judged again' : ''}`
+}

@@ -1,0 +1,196 @@
+import { useMemo, useState } from 'preact/hooks'
+import { type Aspect, aspects } from '../../../record/answers.ts'
+import { addSegment } from '../../../record/operations/segment.ts'
+import type { Walk } from '../../../record/survey.ts'
+import '../../components/strip/strip.css'
+import { StripMap } from '../../components/strip/strip-map.tsx'
+import { lengthOf, stripParts } from '../../components/strip/strip-words.ts'
+import type { Session } from '../../state/session.ts'
+import { placeOfDraft } from './draft-route.ts'
+import { Keys } from './keys.tsx'
+import { PartList } from './part-list.tsx'
+import { nextPart } from './reading-sheet.tsx'
+import { type Recorder, useWriter } from './recorder.ts'
+import { ResumeCard } from './resume-card.tsx'
+import { type SheetRoute, sheetOfAspect } from './sheet-route.ts'
+import { openAspects, soFarLine } from './so-far-line.ts'
+import { StripSheets } from './strip-sheets.tsx'
+
+/** The recording screen: one walk as a strip map that grows upward from where you stand, and the keys to fill it. */
+export function StripScreen(props: { session: Session; walk: string }) {
+  const walk = props.session.survey.value.view.walks.find((one) => one.id === props.walk)
+  if (!walk)
+    return (
+      <main class="strip-screen">
+        <p>This walk is not on this phone.</p>
+      </main>
+    )
+  if (walk.segments.length === 0) return <FirstPart session={props.session} walk={walk} />
+  return <Recording session={props.session} walk={walk} />
+}
+
+function Recording({ session, walk }: { session: Session; walk: Walk }) {
+  const asked = useMemo(() => askedFor(walk), [walk.id])
+  const [at, setAt] = useState<string>(asked.segment)
+  const [trail, setTrail] = useState<readonly SheetRoute[]>(asked.trail)
+  const writer = useWriter(session)
+  const index = Math.max(
+    walk.segments.findIndex((one) => one.id === at),
+    0,
+  )
+  const segment = walk.segments[index]
+  if (!segment) throw new Error('strip/no-part')
+
+  const judgement = session.judgement.value
+  const results = judgement.walks.find((one) => one.id === walk.id)?.segments ?? []
+  const parts = stripParts(walk, judgement.stale ? [] : results)
+  const lineOf = (i: number) => {
+    const part = walk.segments[i]
+    return part
+      ? soFarLine(
+          part,
+          results.find((one) => one.id === part.id),
+          judgement.stale,
+        )
+      : ''
+  }
+  const result = results.find((one) => one.id === segment.id)
+  const complete = openAspects(segment).length === 0
+  const [draftSeen, setDraftSeen] = useState(false)
+  const half = draftSeen || trail.length > 0 ? null : placeOfDraft(walk, session.draft.value)
+
+  const recorder: Recorder = {
+    session,
+    walk,
+    segment,
+    index,
+    before: walk.segments[index - 1],
+    write: writer.write,
+    say: writer.say,
+    answer: (says, how, more) => ({
+      says,
+      how,
+      person: session.person.value,
+      time: new Date().toISOString(),
+      ...more,
+    }),
+  }
+  const pick = (i: number) => {
+    const part = walk.segments[i]
+    if (part) setAt(part.id)
+  }
+
+  return (
+    <div class="strip-screen">
+      <header class="strip-top">
+        <p class="soft">{walk.name}</p>
+        <h1>
+          Part {index + 1} of {walk.segments.length}
+          {segment.name ? `, ${segment.name}` : ''}
+        </h1>
+        <p class="so-far">
+          <b>{lineOf(index)}</b>
+          {complete && result && <span> {result.sentence}</span>}
+          {!complete && (
+            <span class="soft">
+              {' '}
+              {openAspects(segment)
+                .map((one) => one.replace('-', ' '))
+                .join(', ')}
+            </span>
+          )}
+        </p>
+      </header>
+      <main class="strip-main">
+        <StripMap parts={parts} current={index} pick={pick} />
+        {half && session.draft.value && (
+          <ResumeCard
+            draft={session.draft.value}
+            part={half.index + 1}
+            name={half.name}
+            goOn={() => {
+              pick(half.index)
+              setTrail([half.route])
+            }}
+            drop={() => {
+              setDraftSeen(true)
+              void session.keepDraft(null)
+            }}
+          />
+        )}
+        <PartList
+          recorder={recorder}
+          parts={parts}
+          verdictWords={lineOf}
+          pick={pick}
+          go={(route) => setTrail([route])}
+        />
+      </main>
+      <footer class="strip-foot">
+        <div class="tape-rule" aria-hidden="true" />
+        <p class={writer.said?.failed ? 'said failed' : 'said'} role="status">
+          {trail.length === 0 ? (writer.said?.text ?? '') : ''}
+        </p>
+        <Keys
+          segment={segment.id}
+          go={(route) => setTrail([route])}
+          undo={{ label: session.undoLabel.value, press: () => void writer.undo() }}
+          redo={{ label: session.redoLabel.value, press: () => void writer.redo() }}
+          leave={() => location.assign(leavingAddress())}
+        />
+      </footer>
+      <StripSheets
+        recorder={recorder}
+        trail={trail}
+        setTrail={setTrail}
+        said={writer.said}
+        opened={(id) => {
+          setAt(id)
+          setTrail([])
+        }}
+      />
+    </div>
+  )
+}
+
+function leavingAddress(): string {
+  return `${location.pathname.replace(/\/strip\/?$/, '')}/leaving`
+}
+
+/** A walk without parts: the first one is opened with one key, so that nothing is written by looking. */
+function FirstPart({ session, walk }: { session: Session; walk: Walk }) {
+  const writer = useWriter(session)
+  return (
+    <main class="strip-screen">
+      <header class="strip-top">
+        <p class="soft">{walk.name}</p>
+        <h1>No part yet</h1>
+      </header>
+      <p>Stand where the walk starts.</p>
+      <button
+        type="button"
+        class="key primary"
+        onClick={() =>
+          void writer.write((log) => addSegment(log, walk.id, nextPart(session.newId('segment'))), 'part 1 is open')
+        }
+      >
+        Start part 1 here
+      </button>
+      <p role="status">{writer.said?.text ?? ''}</p>
+    </main>
+  )
+}
+
+/** The part to stand at: the one asked for in the address, else the open one, else the first. */
+function askedFor(walk: Walk): { segment: string; trail: SheetRoute[] } {
+  const asked = new URLSearchParams(location.search).get('open')?.split('/') ?? []
+  const named = walk.segments.find((one) => one.id === asked[0])
+  const what = asked[1] as Aspect | undefined
+  if (named)
+    return {
+      segment: named.id,
+      trail: what && aspects.includes(what) ? [sheetOfAspect(what, named.id)] : [],
+    }
+  const open = walk.segments.find((one) => lengthOf(one) === null) ?? walk.segments[0]
+  return { segment: open?.id ?? '', trail: [] }
+}
