@@ -47,9 +47,11 @@ describe('against the translator of the system', () => {
     return new Map(texts.map((text, i) => [text, lines[i] ?? '']))
   }
 
-  it.each(grades.flatMap((grade) => [['client', clientSheet, grade] as const, ['venue', venue, grade] as const]))(
-    'the sheet of the %s is the same line by line, grade %3$i',
-    (_name, sheet, grade) => {
+  const sheets = { client: clientSheet, venue }
+  it.each(grades.flatMap((grade) => [{ reader: 'client', grade } as const, { reader: 'venue', grade } as const]))(
+    'the sheet of the $reader is the same line by line, grade $grade',
+    ({ reader, grade }) => {
+      const sheet = sheets[reader]
       const asked: string[] = []
       const ours = brf(sheet, (text) => {
         asked.push(text)
@@ -87,7 +89,7 @@ describe.each(grades)('grade %d', (grade) => {
     }
   })
 
-  it('holds every sentence of the sheet in its order, whatever the line ends', () => {
+  it('holds every sentence of the sheet, whatever the line ends', () => {
     for (const sheet of [clientSheet, venue]) {
       const text = bodyOf(brf(sheet, translate))
       for (const words of sentencesOf(sheet))

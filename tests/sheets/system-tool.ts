@@ -1,4 +1,4 @@
-import { execFileSync, spawnSync } from 'node:child_process'
+import { spawnSync } from 'node:child_process'
 
 /**
  * Sees to it that a program of Debian is there: found, or installed where the tests run as root (as in continuous
@@ -22,7 +22,9 @@ function found(tool: string): boolean {
   return spawnSync('which', [tool], { stdio: 'ignore' }).status === 0
 }
 
-/** Standard output of a program fed with `input`. */
-export function run(tool: string, args: string[], input?: string | Uint8Array): string {
-  return execFileSync(tool, args, { input, encoding: 'utf8', maxBuffer: 64_000_000, stdio: ['pipe', 'pipe', 'pipe'] })
+/** Standard output of a program fed with `input`. A complaint on its standard error is a failure too. */
+export function run(tool: string, args: string[], input = ''): string {
+  const { status, stdout, stderr } = spawnSync(tool, args, { input, encoding: 'utf8', maxBuffer: 64_000_000 })
+  if (status !== 0 || stderr.trim() !== '') throw new Error(`${tool} ${args.join(' ')}: ${status} ${stderr}`)
+  return stdout
 }
