@@ -1,0 +1,16 @@
+import { TextRun } from 'docx'
+
+/** What XML 1.0 has no place for, not even escaped. */
+const outside = /[^\t\n\r\u0020-\ud7ff\ue000-\ufffd\u{10000}-\u{10ffff}]/gu
+
+/** Text for the file: what XML cannot hold is named, "[U+FFFE]". The library escapes the rest. */
+export function xmlText(text: string): string {
+  return text.replace(
+    outside,
+    (mark) => `[U+${(mark.codePointAt(0) ?? 0).toString(16).toUpperCase().padStart(4, '0')}]`,
+  )
+}
+
+export function bold(text: string): TextRun {
+  return new TextRun({ text: xmlText(text), bold: true })
+}
