@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, test } from 'vitest'
-import { layoutStrip, mostNodes } from '../../src/app/components/strip/layout.ts'
+import { boldIsWider, layoutStrip, mostNodes } from '../../src/app/components/strip/layout.ts'
 import { spreadLabels } from '../../src/app/components/strip/layout-labels.ts'
 import type { StripItem, StripPart, StripView } from '../../src/app/components/strip/layout-part.ts'
 import { greatestBend, placeParts } from '../../src/app/components/strip/layout-place.ts'
@@ -59,8 +59,9 @@ const anyView = fc.record({
 
 describe('parts to scale', () => {
   test('a straight part is as long as measured on one scale and as wide as measured on a larger one', () => {
-    const scale = stripScale(phone)
-    const [one] = placeParts([part({ number: 1, length: 12, width: 1.24 })], scale)
+    const walk = [part({ number: 1, length: 12, width: 1.24 })]
+    const scale = stripScale(phone, walk)
+    const [one] = placeParts(walk, scale)
     if (!one) throw new Error('nothing placed')
     expect(one.start.y - one.end.y).toBeCloseTo(12 * scale.along)
     const [startLeft, startRight] = one.corners
@@ -71,7 +72,7 @@ describe('parts to scale', () => {
   test('a left turn of 45 degrees bends to the left by 45 degrees and shares its corners', () => {
     const [one, two] = placeParts(
       [part({ number: 1, length: 4, turn: 45 * degree, turnText: 'left 45°' }), part({ number: 2, length: 4 })],
-      stripScale(phone),
+      stripScale(phone, []),
     )
     if (!one || !two) throw new Error('nothing placed')
     expect(two.broken).toBeNull()
@@ -89,7 +90,7 @@ describe('parts to scale', () => {
           part({ number: 1, length: 3, turn: angle * degree, turnText: `left ${angle}°` }),
           part({ number: 2, length: 2 }),
         ],
-        stripScale(phone),
+        stripScale(phone, []),
       )[1]
     expect(at(60)?.broken).toBeNull()
     expect(at(61)?.broken).toBe('left 61°')
@@ -100,7 +101,7 @@ describe('parts to scale', () => {
     const turned = { length: 2, turn: 40 * degree, turnText: 'left 40°' }
     const placed = placeParts(
       [part({ number: 1, ...turned }), part({ number: 2, ...turned }), part({ number: 3, length: 2 })],
-      stripScale(phone),
+      stripScale(phone, []),
     )
     expect(placed.map((one) => one.broken)).toEqual([null, null, 'left 40°'])
   })
@@ -108,7 +109,7 @@ describe('parts to scale', () => {
   test('every part goes up and stays in the band, whatever the walk', () => {
     fc.assert(
       fc.property(anyWalk, anyView, (parts, view) => {
-        const scale = stripScale({ ...view, current: 0 })
+        const scale = stripScale({ ...view, current: 0 }, parts)
         const placed = placeParts(parts, scale)
         expect(placed).toHaveLength(parts.length)
         placed.forEach((one, i) => {
@@ -167,7 +168,10 @@ describe('words beside the strip', () => {
         inOrder.forEach((label, i) => {
           expect(label.top).toBeGreaterThanOrEqual(0)
           expect(label.top + label.lines.length * leading).toBeLessThanOrEqual(view.height)
-          for (const line of label.lines) expect(label.x + lineWidth(line, view.text)).toBeLessThanOrEqual(view.width)
+          for (const line of label.lines)
+            expect(label.x + lineWidth(line, view.text) * (label.strong ? boldIsWider : 1)).toBeLessThanOrEqual(
+              view.width,
+            )
           const next = inOrder[i + 1]
           if (!next) return
           expect(label.top + label.lines.length * leading).toBeLessThanOrEqual(next.top)

@@ -20,13 +20,17 @@ const leastDrawn: Metres = 0.5
 /** Nobody has measured it yet: drawn dashed at a plain corridor's width. */
 const unmeasuredWidth: Metres = 1.2
 
-/** Scales for a box: about 20 m fit ahead of you; three metres across fill half to two thirds of the band. */
-export function stripScale(view: StripView): StripScale {
+/**
+ * Scales for a box, the same from the first part of a walk to its last: 20 m fit ahead of you, or the whole walk where
+ * it is shorter; three metres across fill half to two thirds of the band.
+ */
+export function stripScale(view: StripView, parts: readonly StripPart[]): StripScale {
+  const walk = parts.reduce((sum, part) => sum + drawnLength(part), 0)
   const margin = 8
   const words = Math.min(Math.max(view.width * 0.4, view.text * 7), view.text * 20, view.width * 0.6)
   const band = { left: 34, right: Math.max(view.width - margin - words - 22, 90) }
   return {
-    along: Math.min(Math.max(((view.height * 2) / 3 - 24) / 20, 8), 22),
+    along: Math.min(Math.max((view.height * 0.72) / Math.min(Math.max(walk, 8), 20), 8), 26),
     across: Math.min(((band.right - band.left) * 0.62) / widestDrawn, 60),
     band,
     words: { left: view.width - margin - words, right: view.width - margin },

@@ -56,12 +56,15 @@ export interface SceneLabel {
 
 export const mostNodes = 200
 
+/** Bold words take this much more room. */
+export const boldIsWider = 1.12
+
 /** Where the dot stands, as a share of the height: the lower third. */
 const youAt = 0.78
 
 /** The scene for a box. `parts` is the whole walk; what lies outside the box is not drawn. */
 export function layoutStrip(parts: readonly StripPart[], view: StripView): StripScene {
-  const scale = stripScale(view)
+  const scale = stripScale(view, parts)
   const placed = placeParts(parts, scale)
   const here = placed[view.current]
   const shift = here ? view.height * youAt - here.start.y : 0
@@ -85,7 +88,8 @@ export function layoutStrip(parts: readonly StripPart[], view: StripView): Strip
   const leading = Math.round(view.text * 1.3)
   const ask = (key: string, text: string, anchor: Point, rank: number, strong: boolean, verdict: Verdict | null) => {
     if (anchor.y < 0 || anchor.y > view.height) return
-    const lines = wrap(text, wide - (verdict ? view.text + 4 : 0), view.text, 3)
+    const room = (wide - (verdict ? view.text + 4 : 0)) / (strong ? boldIsWider : 1)
+    const lines = wrap(text, room, view.text, 4)
     wishes.push({ key, anchor, height: lines.length * leading, rank, label: { key, lines, strong, verdict } })
   }
 

@@ -91,6 +91,7 @@ export function zoneAsBefore(part: Segment, before: Segment | undefined, now: nu
   return { says: before.zone }
 }
 
+/** A surface ends at a mat, at a grating, where it is wet or loose. */
 function endsSurface(kind: string): boolean {
-  return /mat|surface|carpet/.test(kind)
+  return ['floor-edge', 'grating', 'wet-patch', 'loose-ground'].includes(kind)
 }

@@ -9,6 +9,7 @@ export function Sheet(props: {
   title: string
   close(): void
   back?: (() => void) | undefined
+  said: { text: string; failed: boolean } | null
   children: ComponentChildren
 }) {
   const dialog = useRef<HTMLDialogElement>(null)

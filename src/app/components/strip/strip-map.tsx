@@ -17,7 +17,7 @@ export function StripMap(props: { parts: readonly StripPart[]; current: number; 
     const measure = () => {
       const rem = Number.parseFloat(getComputedStyle(document.documentElement).fontSize) || 16
       const { width, height } = element.getBoundingClientRect()
-      setSize({ width, height, text: Math.max(14, Math.round(rem * 0.9375)) })
+      setSize({ width, height, text: Math.max(14, Math.round(rem * 0.834)) })
     }
     const watch = new ResizeObserver(measure)
     watch.observe(element)
@@ -44,7 +44,6 @@ export function StripMap(props: { parts: readonly StripPart[]; current: number; 
             if (hit) props.pick(hit.index)
           }}
         >
-          <Patterns />
           {scene.parts.map((part) => (
             <PartShape key={part.id} part={part} />
           ))}
@@ -86,7 +85,7 @@ function PartShape({ part }: { part: ScenePart }) {
         d={`${path(part.corners)}z`}
         fill={
           part.verdict && part.verdict !== 'usable' && part.verdict !== 'not-known'
-            ? `url(#strip-${part.verdict})`
+            ? `url(#pattern-${part.verdict})`
             : 'var(--sheet)'
         }
       />
@@ -173,31 +172,5 @@ function AcrossScale({ scene, height }: { scene: StripScene; height: number }) {
         1 m across
       </text>
     </g>
-  )
-}
-
-/** Patterns carry the verdict in black and white; words never lie on them. */
-function Patterns() {
-  return (
-    <defs>
-      <pattern
-        id="strip-with-cautions"
-        width="8"
-        height="8"
-        patternUnits="userSpaceOnUse"
-        patternTransform="rotate(45)"
-      >
-        <rect class="strip-ground" width="8" height="8" />
-        <rect class="verdict-with-cautions" fill="currentColor" width="2" height="8" />
-      </pattern>
-      <pattern id="strip-with-help" width="9" height="9" patternUnits="userSpaceOnUse">
-        <rect class="strip-ground" width="9" height="9" />
-        <circle class="verdict-with-help" fill="currentColor" cx="4.5" cy="4.5" r="1.8" />
-      </pattern>
-      <pattern id="strip-do-not-use" width="8" height="8" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
-        <rect class="strip-ground" width="8" height="8" />
-        <path class="verdict-do-not-use" stroke="currentColor" stroke-width="1.5" d="M0 0H8M0 0V8" />
-      </pattern>
-    </defs>
   )
 }

@@ -33,7 +33,7 @@ export function TextField(props: {
         <input value={text} maxLength={400} onInput={(event) => setText(event.currentTarget.value)} />
       </label>
       <button type="submit" class="key" disabled={text.trim() === props.value || text.trim() === ''}>
-        Save<span class="hidden-words"> {props.label}</span>
+        Save<span class="hidden"> {props.label}</span>
       </button>
     </form>
   )

@@ -4,6 +4,9 @@ import { AddKind } from './aspect-sheet.tsx'
 import type { Recorder } from './recorder.ts'
 import { aspectTitles, type SheetRoute } from './sheet-route.ts'
 
+/** These have their own key: Turn. */
+const atPartEnd = ['turn', 'u-turn']
+
 /** Every kind of the catalogue, found by a word; and what belongs to the part as a whole. */
 export function MoreSheet(props: { recorder: Recorder; go(route: SheetRoute): void }) {
   const [sought, setSought] = useState('')
@@ -14,7 +17,7 @@ export function MoreSheet(props: { recorder: Recorder; go(route: SheetRoute): vo
   const found = kinds.filter((one) => {
     const text =
       `${one.name} ${one.id} ${one.aspect ?? ''} ${one.attributes.map((a) => a.name).join(' ')}`.toLowerCase()
-    return one.aspect !== null && words.every((word) => text.includes(word))
+    return !atPartEnd.includes(one.id) && words.every((word) => text.includes(word))
   })
   return (
     <div class="sheet-keys">

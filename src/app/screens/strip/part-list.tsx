@@ -74,11 +74,11 @@ function Entries(props: { recorder: Recorder; entries: readonly Entry[]; go(rout
           {route && (
             <button type="button" class="key" onClick={() => props.go(route)}>
               {verb}
-              <span class="hidden-words"> {text}</span>
+              <span class="hidden"> {text}</span>
             </button>
           )}
           <button type="button" class="key" onClick={() => void props.recorder.write(drafts, `removed ${text}`)}>
-            Remove<span class="hidden-words"> {text}</span>
+            Remove<span class="hidden"> {text}</span>
           </button>
         </li>
       ))}

@@ -1,6 +1,7 @@
 import type { SegmentResult } from '../../../judge/result.ts'
 import { type Aspect, aspects, aspectsLedOtherwise, type Item, items } from '../../../record/answers.ts'
 import type { Segment } from '../../../record/survey.ts'
+import { verdictWord } from '../../components/verdict-word.ts'
 
 /** Aspects of a part that nobody has answered yet. */
 export function openAspects(segment: Segment): Aspect[] {
@@ -11,19 +12,11 @@ export function openAspects(segment: Segment): Aspect[] {
   })
 }
 
-export const verdictWords = {
-  usable: 'usable',
-  'with-cautions': 'with cautions',
-  'with-help': 'with help',
-  'do-not-use': 'do not use',
-  'not-known': 'not known',
-} as const
-
 /** The top line. While answers are missing there is no verdict word; while a newer judgement is made neither. */
 export function soFarLine(segment: Segment, result: SegmentResult | undefined, stale: boolean): string {
   const open = openAspects(segment)
   if (open.length > 0)
     return `So far: nothing against it; ${open.length} ${open.length === 1 ? 'answer' : 'answers'} left`
   if (!result) return stale ? 'Judging' : 'Not judged yet'
-  return `${verdictWords[result.verdict]}${stale ? ', being judged again' : ''}`
+  return `${verdictWord(result.verdict)}${stale ? ', being judged again' : ''}`
 }

@@ -1,10 +1,12 @@
 import { useMemo, useState } from 'preact/hooks'
+import { useLocation } from 'preact-iso'
 import { type Aspect, aspects } from '../../../record/answers.ts'
 import { addSegment } from '../../../record/operations/segment.ts'
 import type { Walk } from '../../../record/survey.ts'
 import '../../components/strip/strip.css'
 import { StripMap } from '../../components/strip/strip-map.tsx'
 import { lengthOf, stripParts } from '../../components/strip/strip-words.ts'
+import { TapeRule } from '../../components/tape-rule.tsx'
 import type { Session } from '../../state/session.ts'
 import { placeOfDraft } from './draft-route.ts'
 import { Keys } from './keys.tsx'
@@ -30,7 +32,8 @@ export function StripScreen(props: { session: Session; walk: string }) {
 }
 
 function Recording({ session, walk }: { session: Session; walk: Walk }) {
-  const asked = useMemo(() => askedFor(walk), [walk.id])
+  const { query, route } = useLocation()
+  const asked = useMemo(() => askedFor(walk, query.open), [walk.id])
   const [at, setAt] = useState<string>(asked.segment)
   const [trail, setTrail] = useState<readonly SheetRoute[]>(asked.trail)
   const writer = useWriter(session)
@@ -127,7 +130,7 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
         />
       </main>
       <footer class="strip-foot">
-        <div class="tape-rule" aria-hidden="true" />
+        <TapeRule />
         <p class={writer.said?.failed ? 'said failed' : 'said'} role="status">
           {trail.length === 0 ? (writer.said?.text ?? '') : ''}
         </p>
@@ -136,7 +139,7 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
           go={(route) => setTrail([route])}
           undo={{ label: session.undoLabel.value, press: () => void writer.undo() }}
           redo={{ label: session.redoLabel.value, press: () => void writer.redo() }}
-          leave={() => location.assign(leavingAddress())}
+          leave={() => route(`/venue/${session.survey.value.survey}/walk/${walk.id}/leave`)}
         />
       </footer>
       <StripSheets
@@ -151,10 +154,6 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
       />
     </div>
   )
-}
-
-function leavingAddress(): string {
-  return `${location.pathname.replace(/\/strip\/?$/, '')}/leaving`
 }
 
 /** A walk without parts: the first one is opened with one key, so that nothing is written by looking. */
@@ -182,8 +181,8 @@ function FirstPart({ session, walk }: { session: Session; walk: Walk }) {
 }
 
 /** The part to stand at: the one asked for in the address, else the open one, else the first. */
-function askedFor(walk: Walk): { segment: string; trail: SheetRoute[] } {
-  const asked = new URLSearchParams(location.search).get('open')?.split('/') ?? []
+function askedFor(walk: Walk, open: string | undefined): { segment: string; trail: SheetRoute[] } {
+  const asked = open?.split('/') ?? []
   const named = walk.segments.find((one) => one.id === asked[0])
   const what = asked[1] as Aspect | undefined
   if (named)
@@ -191,6 +190,6 @@ function askedFor(walk: Walk): { segment: string; trail: SheetRoute[] } {
       segment: named.id,
       trail: what && aspects.includes(what) ? [sheetOfAspect(what, named.id)] : [],
     }
-  const open = walk.segments.find((one) => lengthOf(one) === null) ?? walk.segments[0]
-  return { segment: open?.id ?? '', trail: [] }
+  const unfinished = walk.segments.find((one) => lengthOf(one) === null) ?? walk.segments[0]
+  return { segment: unfinished?.id ?? '', trail: [] }
 }
