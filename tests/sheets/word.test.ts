@@ -31,6 +31,7 @@ const textOf = (xml: string) =>
   [...xml.matchAll(/<w:t(?: [^>]*)?>([^<]*)<\/w:t>/g)]
     .map(([, text = '']) => text.replaceAll(/&(\w+);/g, (whole, name: string) => entities[name] ?? whole))
     .join('')
+    .replaceAll('\u00a0', ' ')
 
 interface Para {
   style: string | null
@@ -150,7 +151,8 @@ if (process.env.TAUTLINE_LONG === '1')
       for (const sheet of [clientSheet, venueSheet]) {
         writeFileSync(join(folder, 'sheet.docx'), await toWord(sheet))
         const profile = `-env:UserInstallation=file://${folder}/profile`
-        run('soffice', [profile, '--headless', '--convert-to', 'html', '--outdir', folder, join(folder, 'sheet.docx')])
+        const args = [profile, '--headless', '--convert-to', 'html', '--outdir', folder, join(folder, 'sheet.docx')]
+        run('soffice', args, '', /^Warning: failed to launch javaldx[^\n]*\n?$/)
         const html = readFileSync(join(folder, 'sheet.html'), 'utf8')
         const found = [...html.matchAll(/<h(\d)[^>]*>(.*?)<\/h\1>/gs)].map(([, level, inner = '']) => [
           `Heading${level}`,
@@ -160,7 +162,11 @@ if (process.env.TAUTLINE_LONG === '1')
             .trim(),
         ])
         expect(found).toEqual(headingsOf(sheet))
-        expect(html.match(/<li>/g)?.length ?? 0).toBeGreaterThan(1)
+        const listed = paragraphsOf(unzip(await toWord(sheet)).get('word/document.xml') ?? '').filter(
+          (one) => one.listed,
+        )
+        expect(html.match(/<li[ >]/g)).toHaveLength(listed.length)
+        expect(html.match(/<thead>/g)?.length ?? 0).toBe(sheet === venueSheet ? 1 : 0)
       }
     } finally {
       rmSync(folder, { recursive: true, force: true })

@@ -17,11 +17,6 @@ export function pageIsFull(doc: PDFDocument, height: number): boolean {
   return doc.y + height > paper.height - margins.bottom
 }
 
-/** Text in which a figure is never parted from its unit at the end of a line. */
-export function held(text: string): string {
-  return text.replace(/(\d) (?=(mm|cm|m|metres?|N|s|kg|%|paces?)\b)/g, '$1\u00a0')
-}
-
 /**
  * What every page has besides the sheet's words, all of it marked as artifacts: the tape at its head, DRAFT, and at its foot
  * the sheet's title and "Page 2 of 5". Drawn last, when the pages are known.

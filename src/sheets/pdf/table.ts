@@ -1,7 +1,8 @@
 import type PDFDocument from 'pdfkit'
 import type { StructureElement } from 'pdfkit'
+import { held } from '../../units/held.ts'
 import type { Block } from '../content/tree.ts'
-import { face, held, ink, margins, measure, pageIsFull, paper } from './paper.ts'
+import { face, ink, margins, measure, pageIsFull, paper } from './paper.ts'
 
 type Table = Extract<Block, { kind: 'table' }>
 

@@ -1,8 +1,9 @@
 import PDFDocument, { type OutlineItem, type StructureElement } from 'pdfkit'
 import { toBytes } from 'pdfkit/output'
+import { held } from '../../units/held.ts'
 import type { Block, Outline, Refusal, Section } from '../content/tree.ts'
 import { refuseUnshown } from './glyphs.ts'
-import { face, furnish, held, ink, margins, measure, pageIsFull, paper } from './paper.ts'
+import { face, furnish, ink, margins, measure, pageIsFull, paper } from './paper.ts'
 import { drawTable } from './table.ts'
 import { drawShape, shapeWords } from './verdict-shape.ts'
 

@@ -4,6 +4,7 @@ import {
   Footer,
   Header,
   LevelFormat,
+  LineRuleType,
   Packer,
   PageNumber,
   Paragraph,
@@ -12,7 +13,7 @@ import {
 } from 'docx'
 import type { Block, Outline, Section } from '../content/tree.ts'
 import { tableOf } from './table.ts'
-import { bold, xmlText } from './xml-text.ts'
+import { words, xmlText } from './xml-text.ts'
 
 /** The ink of the printed sheet. */
 const ink = '1B1F3B'
@@ -49,7 +50,7 @@ export async function toWord(outline: Outline): Promise<Uint8Array> {
     sections: [
       {
         headers: {
-          default: new Header({ children: outline.draft ? [new Paragraph({ children: [bold('DRAFT')] })] : [] }),
+          default: new Header({ children: outline.draft ? [new Paragraph({ children: [words('DRAFT', true)] })] : [] }),
         },
         footers: { default: new Footer({ children: [foot(outline.title)] }) },
         children: [
@@ -77,25 +78,24 @@ function heading(text: string, level: number): Paragraph {
   return new Paragraph({
     style: `Heading${Math.min(level, 6)}`,
     keepNext: true,
-    children: [new TextRun(xmlText(text))],
+    children: [words(text)],
   })
 }
 
 function blockOf(block: Block): Piece[] {
   switch (block.kind) {
     case 'paragraph':
-      return [new Paragraph({ children: [new TextRun(xmlText(block.line.text))] })]
+      return [new Paragraph({ children: [words(block.line.text)] })]
     case 'verdict':
-      return [new Paragraph({ style: 'Verdict', children: [new TextRun(xmlText(block.text))] })]
+      return [new Paragraph({ style: 'Verdict', children: [words(block.text)] })]
     case 'list':
       return block.items.map(
-        ({ text }) =>
-          new Paragraph({ numbering: { reference: bullets, level: 0 }, children: [new TextRun(xmlText(text))] }),
+        ({ text }) => new Paragraph({ numbering: { reference: bullets, level: 0 }, children: [words(text)] }),
       )
     case 'table':
       // A table at the end of a file needs a paragraph after it.
       return [
-        new Paragraph({ style: 'TableCaption', keepNext: true, children: [new TextRun(xmlText(block.caption))] }),
+        new Paragraph({ style: 'TableCaption', keepNext: true, children: [words(block.caption)] }),
         tableOf(block),
         new Paragraph({}),
       ]
@@ -105,10 +105,8 @@ function blockOf(block: Block): Piece[] {
 function foot(title: string): Paragraph {
   return new Paragraph({
     children: [
-      new TextRun(`${xmlText(title)}. Page `),
-      new TextRun({ children: [PageNumber.CURRENT] }),
-      new TextRun(' of '),
-      new TextRun({ children: [PageNumber.TOTAL_PAGES] }),
+      new TextRun({ children: ['Page ', PageNumber.CURRENT, ' of ', PageNumber.TOTAL_PAGES] }),
+      words(`. ${title}`),
     ],
   })
 }
@@ -128,9 +126,9 @@ function stylesOf(lang: string, size: number) {
     default: {
       document: {
         run: { size, font: 'Arial', color: ink, language: { value: lang } },
-        paragraph: { spacing: { line: 360, after: 80 } },
+        paragraph: { spacing: { line: 360, lineRule: LineRuleType.AUTO, after: 80 } },
       },
-      heading1: headingRun(24),
+      heading1: { ...headingRun(24), paragraph: { spacing: { line: 280, lineRule: LineRuleType.AUTO, after: 120 } } },
       heading2: { ...headingRun(12), ...spaced },
       heading3: { ...headingRun(6), ...spaced },
       heading4: { ...headingRun(2), ...spaced },

@@ -1,4 +1,5 @@
 import { TextRun } from 'docx'
+import { held } from '../../units/held.ts'
 
 /** What XML 1.0 has no place for, not even escaped. */
 const outside = /[^\t\n\r\u0020-\ud7ff\ue000-\ufffd\u{10000}-\u{10ffff}]/gu
@@ -11,6 +12,7 @@ export function xmlText(text: string): string {
   )
 }
 
-export function bold(text: string): TextRun {
-  return new TextRun({ text: xmlText(text), bold: true })
+/** Words on the page, each figure held to its unit. */
+export function words(text: string, bold = false): TextRun {
+  return new TextRun({ text: xmlText(held(text)), bold })
 }
