@@ -23,7 +23,7 @@ function found(tool: string): boolean {
 }
 
 /** Standard output of a program fed with `input`. A complaint on its standard error is a failure too, but for `known`. */
-export function run(tool: string, args: string[], input = '', known = /^$/): string {
+export function run(tool: string, args: string[], input: string | Uint8Array = '', known = /^$/): string {
   const { status, stdout, stderr } = spawnSync(tool, args, { input, encoding: 'utf8', maxBuffer: 64_000_000 })
   if (status !== 0 || !(stderr.trim() === '' || known.test(stderr)))
     throw new Error(`${tool} ${args.join(' ')}: ${status} ${stderr}`)

@@ -74,6 +74,8 @@ describe.each([
     const headings = paragraphsOf(document).filter(({ style }) => style?.startsWith('Heading'))
     expect(headings.map(({ style, text }) => [style, text])).toEqual(headingsOf(sheet))
     for (const [style] of headingsOf(sheet)) expect(files.get('word/styles.xml')).toContain(`w:styleId="${style}"`)
+    // Nothing in a paragraph may undo its style.
+    expect(document).not.toMatch(/<w:b w:val="(false|0)"\/>/)
   })
 
   it('holds every sentence of the outline, in its order', () => {

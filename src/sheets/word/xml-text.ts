@@ -14,5 +14,6 @@ export function xmlText(text: string): string {
 
 /** Words on the page, each figure held to its unit. */
 export function words(text: string, bold = false): TextRun {
-  return new TextRun({ text: xmlText(held(text)), bold })
+  // Said only where it is so: a plain "not bold" would undo a heading's style.
+  return new TextRun({ text: xmlText(held(text)), ...(bold ? { bold } : {}) })
 }
