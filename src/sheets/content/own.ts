@@ -5,7 +5,7 @@ export const isolateEnd = '\u2069'
 const spaces = /[\t\n\v\f\r\u0085\u2028\u2029\s]+/gu
 /** Controls, soft hyphens, zero-width and direction marks; joiners stay, scripts and emoji need them. */
 const invisible =
-  /[\p{Cc}\p{Surrogate}\u00ad\u061c\u180e\u200b\u200e\u200f\u202a-\u202e\u2060-\u206f\ufeff\ufff9-\ufffb]/gu
+  /[\p{Cc}\p{Surrogate}\p{Noncharacter_Code_Point}\u00ad\u061c\u180e\u200b\u200e\u200f\u202a-\u202e\u2060-\u206f\ufeff\ufff9-\ufffb]/gu
 const rightToLeft = /[\p{Script=Arabic}\p{Script=Hebrew}\p{Script=Syriac}\p{Script=Thaana}\p{Script=Nko}]/u
 
 /** A name in a heading or a sentence is cut here; the handler's file gives it whole. */
