@@ -2,6 +2,7 @@ import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
 import { createRequire } from 'node:module'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
+import { inflateSync } from 'node:zlib'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { own, ownWhole } from '../../src/sheets/content/own.ts'
 import type { Outline, Section } from '../../src/sheets/content/tree.ts'
@@ -60,6 +61,21 @@ function headingsOf(sheet: Outline): [string, string][] {
 /** Words with every run of white space one blank: line ends fall where they fall. */
 const squeezed = (text: string) => text.replaceAll(/[\s\u00a0]+/g, ' ').trim()
 
+/** Inflated content streams of the pages: those that mark content. */
+function contentStreams(file: Buffer): string[] {
+  const streams: string[] = []
+  for (let at = file.indexOf('stream\n'); at >= 0; at = file.indexOf('stream\n', at + 1)) {
+    if (file.toString('latin1', at - 3, at) === 'end') continue
+    try {
+      const inflated = inflateSync(file.subarray(at + 7)).toString('latin1')
+      if (/ BDC\n/.test(inflated)) streams.push(inflated)
+    } catch {
+      // Not every stream is deflated: the file's own data is not.
+    }
+  }
+  return streams
+}
+
 describe.each([
   ['client', clientSheet],
   ['venue, draft', venueSheet],
@@ -105,6 +121,24 @@ describe.each([
     // Running heads and feet stand between pages, so single words are compared.
     const shown = new Set(squeezed(run('pdftotext', ['-raw', path, '-'])).split(' '))
     for (const words of sentencesOf(sheet).flatMap((text) => text.split(' '))) expect(shown, words).toContain(words)
+  })
+
+  it('draws nothing that is neither tagged nor an artifact (ISO 14289-1, 7.1)', () => {
+    let painted = 0
+    for (const stream of contentStreams(readFileSync(path))) {
+      let depth = 0
+      for (const line of stream.split('\n')) {
+        if (/ B(DC|MC)$/.test(line)) depth++
+        else if (/^EMC$/.test(line)) depth--
+        else if (/(^|[\] ])(TJ|Tj|f|f\*|S|s|B)$/.test(line)) {
+          painted++
+          expect(depth, line).toBeGreaterThan(0)
+        }
+        expect(depth).toBeGreaterThanOrEqual(0)
+      }
+      expect(depth).toBe(0)
+    }
+    expect(painted).toBeGreaterThan(50)
   })
 
   it('embeds its faces, as far as used', () => {
