@@ -27,9 +27,14 @@ export interface Interval {
 /** Changed uncertainties by instrument, as a survey has them. */
 export type Changed = Readonly<Record<string, { absolute: number; relative: number }>>
 
+export type Unsafe = 'low' | 'high' | 'both'
+
 export interface IntervalOptions {
-  /** The end at which the quantity does harm: 'low' for what there is (a clear width), 'high' for what is in the way. */
-  unsafe: 'low' | 'high'
+  /**
+   * The end at which the quantity does harm: 'low' for what there is (a clear width), 'high' for what is in the way,
+   * 'both' where neither end is the unsafe one (an angle, an offset): its safe side is then the end greater in size.
+   */
+  unsafe: Unsafe
   changed?: Changed | undefined
   /** Readings taken as known exactly at this value, by id: a judgement "if the truth were at this end". */
   pins?: ReadonlyMap<string, number> | undefined
@@ -61,7 +66,7 @@ export function interval(readings: readonly Reading[] | undefined, options: Inte
 
 /** A reading replaces others only by a named person's act with a reason. */
 function isAct(one: Reading): one is Reading & { settles: NonNullable<Reading['settles']> } {
-  return Boolean(one.settles && one.settles.by.trim() && one.settles.reason.trim())
+  return Boolean(one.settles?.by.trim() && one.settles.reason.trim())
 }
 
 interface Span {
@@ -79,15 +84,16 @@ function span(one: Reading, { unsafe, changed, pins }: IntervalOptions): Span {
   const low = one.bound === 'below' ? Number.NEGATIVE_INFINITY : value - u
   const high = one.bound === 'above' ? Number.POSITIVE_INFINITY : value + u
   if (!one.safeSide) return { low, value, high, u }
-  const end = unsafe === 'low' ? low : high
+  const end = unsafe === 'low' || (unsafe === 'both' && value < 0) ? low : high
   return Number.isFinite(end) ? { low: end, value: end, high: end, u: 0 } : { low, value, high, u }
 }
 
 /** One place: every reading there, whoever took it. */
 function joined(place: readonly Reading[], options: IntervalOptions): Interval {
   const spans = place.map((one) => ({ one, at: span(one, options) }))
-  const sign = options.unsafe === 'low' ? 1 : -1
-  const order = (s: Span) => (options.unsafe === 'low' ? s.low : -s.high)
+  const { unsafe } = options
+  const order = (s: Span) =>
+    unsafe === 'low' ? s.low : unsafe === 'high' ? -s.high : -Math.max(Math.abs(s.low), Math.abs(s.high))
   // Each person's repeats: the unsafe-most speaks for that person, with its own uncertainty.
   const speakers = new Map<string, { one: Reading; at: Span }>()
   for (const next of spans) {
@@ -99,15 +105,14 @@ function joined(place: readonly Reading[], options: IntervalOptions): Interval {
   const apart = spans.some((a) => spans.some((b) => disagree(a.one, a.at, b.one, b.at)))
   // "Take the safe side" of the unsafe-most reading settles the place there.
   const settled = worst.one.safeSide === true
-  const heard = apart && !settled ? spans : settled ? [worst] : [...speakers.values()]
+  const heard = settled ? [worst] : apart || unsafe === 'both' ? spans : [...speakers.values()]
   const low = Math.min(...heard.map(({ at }) => at.low))
   const high = Math.max(...heard.map(({ at }) => at.high))
   return {
     low,
     high,
     value: worst.at.value,
-    unsafe: sign > 0 ? low : high,
-    safe: sign > 0 ? high : low,
+    ...ends(low, high, unsafe),
     differs: apart && !settled,
     told: place.every((one) => instrument(one.instrument)?.hearsay === true || !instrument(one.instrument)),
     tooQuick: place.some((one) => one.tooQuick === true),
@@ -125,20 +130,23 @@ function disagree(a: Reading, atA: Span, b: Reading, atB: Span): boolean {
 }
 
 /** The worst of two places, end by end; what differs or was told at either stays said. */
-function worse(a: Interval, b: Interval, unsafe: 'low' | 'high'): Interval {
-  const pick = unsafe === 'low' ? Math.min : Math.max
-  const low = pick(a.low, b.low)
-  const high = pick(a.high, b.high)
+function worse(a: Interval, b: Interval, unsafe: Unsafe): Interval {
+  const low = unsafe === 'high' ? Math.max(a.low, b.low) : Math.min(a.low, b.low)
+  const high = unsafe === 'low' ? Math.min(a.high, b.high) : Math.max(a.high, b.high)
   const rules = (unsafe === 'low' ? b.low < a.low : b.high > a.high) ? b : a
   return {
     low,
     high,
-    value: pick(a.value, b.value),
-    unsafe: unsafe === 'low' ? low : high,
-    safe: unsafe === 'low' ? high : low,
+    value: rules.value,
+    ...ends(low, high, unsafe),
     differs: a.differs || b.differs,
     told: a.told || b.told,
     tooQuick: a.tooQuick || b.tooQuick,
     ids: rules === a ? [...a.ids, ...b.ids] : [...b.ids, ...a.ids],
   }
+}
+
+function ends(low: number, high: number, unsafe: Unsafe): { unsafe: number; safe: number } {
+  const lower = unsafe === 'low' || (unsafe === 'both' && Math.abs(low) > Math.abs(high))
+  return lower ? { unsafe: low, safe: high } : { unsafe: high, safe: low }
 }

@@ -1,0 +1,99 @@
+import type { Interval } from '../../record/interval.ts'
+import type { Feature } from '../../record/survey.ts'
+import { type Draft, epsilon, type Finding, finding } from '../finding.ts'
+import { read } from '../setting.ts'
+import { helpAt, helpLedOtherwise, nameOf, type Site } from '../site.ts'
+import { metresThere } from '../words.ts'
+
+/** Only what a body meets settles an edge: rope, chain or tape is no guard. */
+const guards = new Set(['rail', 'wall', 'barrier', 'screen-doors'])
+const kerbHeight = 0.18
+/** A kerb under this does not hold a wheel back. */
+const holdsWheels = 0.06
+const kerbWithin = 1.5
+const kerbCaution = 1.0
+const kerbHelp = 0.6
+const stopUnder = 2.0
+const within = 3.0
+
+type Kind = 'kerb' | 'drop' | 'traffic'
+
+/** Whether a guard stands that settles the edge. */
+export function isGuarded(feature: Feature): boolean {
+  return guards.has(feature.words.guard?.says ?? 'none')
+}
+
+/** Edges within 3 m of the walking line, by kind and by their least distance. No ratio. Common practice; traffic from memory. */
+export function edge(site: Site): Finding[] {
+  return site.segment.features.flatMap((feature) => {
+    if (!isEdge(feature)) return []
+    const distance = read(site.setting, feature, 'distance', 'low')
+    if (!distance) return []
+    return [judged(site, feature, distance, edgeKind(site, feature))]
+  })
+}
+
+/** A row of the catalogue that is an edge beside the way. */
+export function isEdge(feature: Feature): boolean {
+  return ['drop-off', 'water-edge', 'platform-edge', 'traffic-edge', 'kerb-edge'].includes(feature.kind)
+}
+
+function edgeKind({ setting }: Site, feature: Feature): Kind {
+  if (feature.kind === 'traffic-edge') {
+    const kerb = read(setting, feature, 'kerb', 'low')
+    return kerb && kerb.value >= holdsWheels - epsilon ? 'kerb' : 'traffic'
+  }
+  if (feature.kind !== 'kerb-edge') return 'drop'
+  const height = read(setting, feature, 'height', 'high')
+  // A kerb of unknown height is as deep as it likes.
+  return height && height.value <= kerbHeight + epsilon ? 'kerb' : 'drop'
+}
+
+function judged(site: Site, feature: Feature, distance: Interval, kind: Kind): Finding {
+  const led = helpLedOtherwise(site, feature)
+  const guarded = isGuarded(feature)
+  const raw = guarded ? (led ? 'needs-help' : 'passes') : stateOf(kind, distance)
+  // Past a drop within 2 m somebody else leads; further edges are the helper's while the robot leads.
+  const help = led ?? (raw === 'needs-help' ? helpAt(site, feature) : undefined)
+  const told = ['told', 'by-eye'].includes(feature.words.guard?.how ?? '') && guarded
+  return finding({
+    // An edge within reach is one of the stop items.
+    id: raw === 'stop-item' ? 'stop-item' : 'edge',
+    feature: feature.id,
+    subject: `Edge at ${nameOf(feature)}`,
+    detail: () =>
+      guarded
+        ? `${feature.words.guard?.says?.replace('-', ' ')} at ${metresThere(distance.low)}`
+        : `no guard at ${metresThere(distance.low)} from the walking line`,
+    harm: kind === 'traffic' ? 'road' : 'fall',
+    source: kind === 'traffic' ? 'common practice, from memory' : 'common practice',
+    raw,
+    demand: stopUnder,
+    capacity: distance.low,
+    caution: raw === 'tight' ? cautionOf(kind) : null,
+    from: [distance],
+    strict: true,
+    told,
+    ...(help ? { help } : {}),
+  })
+}
+
+function cautionOf(kind: Kind): string {
+  return kind === 'kerb'
+    ? 'Kerb near the way. If the ground changes underfoot, stop.'
+    : 'Traffic near the way. If the ground changes underfoot, stop.'
+}
+
+function stateOf(kind: Kind, { low, value, high }: Interval): Draft['raw'] {
+  if (kind === 'kerb') {
+    if (value > kerbWithin + epsilon || value >= kerbCaution - epsilon) return 'passes'
+    return value < kerbHelp - epsilon ? 'needs-help' : 'tight'
+  }
+  if (kind === 'traffic') {
+    if (low < stopUnder - epsilon) return 'needs-help'
+    return low <= within + epsilon ? 'tight' : 'passes'
+  }
+  if (high < stopUnder - epsilon) return 'stop-item'
+  if (low < stopUnder - epsilon) return 'unsure'
+  return low <= within + epsilon ? 'needs-help' : 'passes'
+}

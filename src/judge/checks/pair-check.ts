@@ -1,0 +1,29 @@
+import type { Metres, MetresPerSecond } from '../../units/quantity.ts'
+import type { Draft, Finding, Ratio } from '../finding.ts'
+
+/** A check that depends on leash length or pace. Cells are cheap and made for the whole grid; findings for what is shown. */
+export interface PairCheck {
+  id: string
+  feature: string
+  /** Stop, door and lift times: aimed at 0.85 or less when a pace is chosen. */
+  timed: boolean
+  cell(leash: Metres, pace: MetresPerSecond): Cell
+  finding(leash: Metres, pace: MetresPerSecond): Finding
+  /** What comes with it at this pair: the slack leash of a planned pause. */
+  beside?(leash: Metres, pace: MetresPerSecond): Finding[]
+}
+
+export interface Cell {
+  state: Finding['state']
+  ratio: Ratio | null
+  pauses: number
+  /** Told readings that cannot lift a verdict. */
+  told: boolean
+}
+
+/** What a check says of one pair, before the sentence. */
+export type Reckoned = Pick<Draft, 'raw' | 'ratio'> & {
+  demand: number | null
+  capacity: number | null
+  pauses?: number
+}

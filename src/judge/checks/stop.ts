@@ -1,0 +1,92 @@
+import { finding, ratioOf, stateOf } from '../finding.ts'
+import type { Site } from '../site.ts'
+import { creeping, leastSeparation } from '../team.ts'
+import { metresNeeded, metresThere } from '../words.ts'
+import type { PairCheck, Reckoned } from './pair-check.ts'
+
+const gravity = 9.81
+
+/** Distance a handler still walks after the robot stopped dead; infinite where a downward slope outruns the braking. */
+export function stopDistance(pace: number, reaction: number, deceleration: number, down: number): number {
+  const braking = deceleration - gravity * Math.sin(Math.atan(down))
+  return braking <= 0 ? Number.POSITIVE_INFINITY : pace * reaction + (pace * pace) / (2 * braking)
+}
+
+/**
+ * The robot stops dead; the handler reacts, brakes and must not walk into it: v t_r + v^2 / (2 (a_h - g sin down)) and
+ * the planned slack, for the separation less half the robot before the attachment and the handler's front. A measured
+ * braking adds the robot's own run-out, as far as the gap is never less on the way.
+ */
+export function stop(site: Site): PairCheck {
+  const { setting, segment, slope } = site
+  const { team } = setting
+  const { robot, handler, leash: limits } = team.card
+  const { a, d } = team.bodies
+  const known = new Map<number, Reckoned>()
+  const reckon = (leash: number, pace: number): Reckoned => {
+    const key = leash * 1000 + pace
+    const before = known.get(key)
+    if (before) return before
+    const walked = stopDistance(pace, site.reaction, handler.deceleration, slope.down)
+    const demand = walked + limits.plannedSlack
+    const separation = leastSeparation(team, leash, slope.steepest) ?? 0
+    const runOut = robot.hardestBraking
+      ? credited(pace, robot.hardestBraking, site.reaction, handler.deceleration, slope.down)
+      : 0
+    const capacity = separation - (a / 2 - d) - team.front + runOut
+    const ratio = ratioOf({ low: demand, high: demand }, { low: capacity, high: capacity })
+    const reckoned = { raw: stateOf(ratio), ratio, demand, capacity }
+    known.set(key, reckoned)
+    return reckoned
+  }
+  return {
+    id: 'stop',
+    feature: segment.id,
+    timed: true,
+    cell: (leash, pace) => {
+      const { raw, ratio } = reckon(leash, pace)
+      return { state: raw as 'passes', ratio: ratio ?? null, pauses: 0, told: false }
+    },
+    finding: (leash, pace) => {
+      const { raw, ratio, demand, capacity } = reckon(leash, pace)
+      return finding({
+        id: 'stop',
+        feature: segment.id,
+        subject: `Stopping on ${segment.name}`,
+        detail: () => `${metresNeeded(demand ?? 0)} for ${metresThere(capacity ?? 0)} behind a robot that stops dead`,
+        harm: 'fall',
+        source: 'common practice',
+        raw,
+        demand,
+        capacity,
+        ratio: ratio ?? null,
+        caution: raw === 'tight' ? 'Slow. Be ready to stop.' : pace <= creeping + 1e-9 ? 'Very slow here.' : null,
+        at: { leash, pace },
+        from: slope.from,
+      })
+    },
+  }
+}
+
+/**
+ * The robot's run-out that the gap really gains: the handler's way less the robot's, at its greatest over time.
+ * Equals v^2 / (2 a_max) where the robot stands before the handler brakes.
+ */
+function credited(pace: number, robot: number, reaction: number, deceleration: number, down: number): number {
+  const braking = deceleration - gravity * Math.sin(Math.atan(down))
+  const walked = stopDistance(pace, reaction, deceleration, down)
+  if (!Number.isFinite(walked) || robot <= 0) return 0
+  const stands = pace / robot
+  const handlerStands = reaction + pace / braking
+  const way = (t: number, from: number, by: number) => {
+    const brakes = Math.min(Math.max(0, t - from), pace / by)
+    return pace * Math.min(t, from) + pace * brakes - (by * brakes * brakes) / 2
+  }
+  const closing = (t: number) => way(t, reaction, braking) - way(t, 0, robot)
+  // The gap closes fastest where one of them stands or where their speeds are equal.
+  const equal = robot < braking ? (braking * reaction) / (braking - robot) : handlerStands
+  const worst = Math.max(
+    ...[stands, handlerStands, equal].filter((t) => t >= 0).map((t) => closing(Math.min(t, handlerStands))),
+  )
+  return Math.max(0, walked - worst)
+}

@@ -1,0 +1,159 @@
+import { kind } from '../../catalogue/kinds.ts'
+import { type Lacking, type Pinch, type PinchSite, pinchesOf } from '../../plan/pinches.ts'
+import { epsilon, type Finding, finding, ratioOf, roomState } from '../finding.ts'
+import type { Room, RoomSolver } from '../rooms.ts'
+import { read } from '../setting.ts'
+import { nameOf, type Site } from '../site.ts'
+import { greatestSeparation, leastSeparation } from '../team.ts'
+import { mmNeeded, mmThere } from '../words.ts'
+import { isEdge } from './edge.ts'
+import type { PairCheck } from './pair-check.ts'
+import { pauseCounts, slackLeash } from './slack-leash.ts'
+
+/** Above the clearance needed in a frame or turn a room check is a caution to this much more, metres a side. */
+export const frameBand = 0.05
+/** No pause so near a stair, an edge or a lift. */
+const apartFromHarm = 2.0
+
+export function pinchSite({ setting, segment, before, after }: Site): PinchSite {
+  return {
+    segment,
+    before,
+    after,
+    read: (holder, quantity, unsafe) => read(setting, holder, quantity, unsafe),
+    team: { a: setting.team.bodies.a, d: setting.team.bodies.d },
+  }
+}
+
+export function isPinch(one: Pinch | Lacking): one is Pinch {
+  return 'build' in one
+}
+
+/**
+ * Turns, frames, pinches and obstructions: the room that the planner certifies, and the most there can be, at both ends
+ * of every reading and over the separations of the length. In the walk's own direction. A slack pause counts only where
+ * the handler is shown to stand, and never on a ramp, near a stair, edge or lift, or in a two-way crowd.
+ */
+export function turns(site: Site, rooms: RoomSolver, wider?: { feature: string; by: number }): PairCheck[] {
+  if (!site.led) return []
+  const pinches = pinchesOf(pinchSite(site)).filter(isPinch)
+  return pinches.map((pinch) =>
+    pairOf(site, wider && pinch.feature.id === wider.feature ? widened(pinch, wider.by) : pinch, rooms),
+  )
+}
+
+/** The same pinch with every width that much wider. */
+function widened(pinch: Pinch, by: number): Pinch {
+  const widths = Object.entries(pinch.widths).map(([letter, { low, value, high }]) => [
+    letter,
+    { low: low + by, value: value + by, high: high + by },
+  ])
+  return { ...pinch, widths: Object.fromEntries(widths) }
+}
+
+function pairOf(site: Site, pinch: Pinch, rooms: RoomSolver): PairCheck {
+  const { setting } = site
+  const { team } = setting
+  const need = team.card.leash.clearancePinch
+  const pausing = mayPause(site, pinch)
+  const known = new Map<number, Solved>()
+  const solve = (leash: number): Solved => {
+    const before = known.get(leash)
+    if (before) return before
+    const separations = [
+      leastSeparation(team, leash, site.slope.steepest),
+      greatestSeparation(team, leash, site.slope.steepest),
+    ]
+    const within = separations.filter((one): one is number => one !== null)
+    const ask = { pausesAt: need, back: false }
+    const taut = rooms.room(pinch, within, { ...ask, slack: false })
+    const state = roomState(taut, need, frameBand)
+    let solved: Solved = { room: taut, state, pauses: 0 }
+    if (pausing && (state === 'fails' || state === 'unsure')) {
+      const slack = rooms.room(pinch, within, { ...ask, slack: true })
+      const with_ = roomState(slack, need, frameBand)
+      const counts = pauseCounts(team, leash, slack.nearest ?? 0)
+      // A pause is a caution however wide the room.
+      if (counts && (with_ === 'passes' || with_ === 'tight'))
+        solved = { room: slack, state: 'tight', pauses: Math.max(1, slack.pauses) }
+      else if (counts && with_ === 'unsure')
+        solved = { room: { ...taut, high: slack.high }, state: 'unsure', pauses: 0 }
+    }
+    known.set(leash, solved)
+    return solved
+  }
+  const demand = team.envelope + 2 * need
+  const side = (end: number | null) => (end === null ? 0 : team.envelope + 2 * end)
+  const ratio = ({ low, high }: Room) => ratioOf({ low: demand, high: demand }, { low: side(low), high: side(high) })
+  const subject = subjectOf(site, pinch)
+  const whole = (leash: number, pace: number): Finding => {
+    const { room, state, pauses } = solve(leash)
+    return finding({
+      id: 'turn',
+      feature: pinch.feature.id,
+      subject,
+      detail: () =>
+        `${room.low === null ? 'no room certified' : `${mmThere(room.low)} a side`} for ${mmNeeded(need)}${pauses > 0 ? ' with a slack pause' : ''}`,
+      harm: 'trap',
+      source: 'common practice',
+      raw: state,
+      demand,
+      capacity: room.low === null ? null : side(room.low),
+      ratio: ratio(room),
+      caution:
+        pauses > 0
+          ? 'The leash goes slack here. Stand still until it pulls.'
+          : state === 'passes'
+            ? null
+            : 'Tight here. Arms in.',
+      at: { leash, pace },
+      from: pinch.from,
+      strict: true,
+      pauses,
+    })
+  }
+  const cells = new Map<number, ReturnType<PairCheck['cell']>>()
+  return {
+    id: 'turn',
+    feature: pinch.feature.id,
+    timed: false,
+    cell: (leash) => {
+      const before = cells.get(leash)
+      if (before) return before
+      const { state, ratio: r, pauses, told } = whole(leash, 0)
+      const cell = { state, ratio: r, pauses, told }
+      cells.set(leash, cell)
+      return cell
+    },
+    finding: whole,
+    beside: (leash, pace) => {
+      const { pauses, room } = solve(leash)
+      return pauses > 0 ? [slackLeash(site, pinch.feature.id, room.nearest ?? 0, leash, pace)] : []
+    },
+  }
+}
+
+interface Solved {
+  room: Room
+  state: ReturnType<typeof roomState>
+  pauses: number
+}
+
+function subjectOf({ segment }: Site, { feature }: Pinch): string {
+  return feature === segment.turn && !feature.name ? `Turn at the end of ${segment.name}` : `Room at ${nameOf(feature)}`
+}
+
+/** Whether a planned slack pause may be counted at this pinch. */
+function mayPause({ setting, segment, around, length }: Site, { feature }: Pinch): boolean {
+  if (setting.team.card.handler.standsWhenSlack === null) return false
+  if ((around.crowd ?? 3) >= 2 && around.twoWay) return false
+  if (segment.features.some((one) => one.kind === 'ramp')) return false
+  const at = feature === segment.turn ? length?.value : feature.along
+  return !segment.features.some((one) => {
+    if (one === feature) return one.kind === 'lift'
+    if (!isEdge(one) && one.kind !== 'lift' && kind(one.kind)?.harm !== 'fall') return false
+    // An edge runs beside the whole stretch; where a thing stands is not known, it is near.
+    if (isEdge(one) || at === undefined || one.along === undefined) return true
+    return Math.abs(one.along - at) < apartFromHarm - epsilon
+  })
+}
