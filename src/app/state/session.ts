@@ -1,5 +1,5 @@
 import type { ReadonlySignal } from '@preact/signals'
-import type { WalkResult } from '../../judge/result.ts'
+import type { Assessment, WalkResult } from '../../judge/result.ts'
 import type { FactDraft } from '../../record/facts.ts'
 import type { FactLog } from '../../record/log.ts'
 import type { Survey } from '../../record/survey.ts'
@@ -34,6 +34,8 @@ export type Committed = { saved: true; label: string; at: string } | { saved: fa
 /** What the judge says now; `stale` while a newer judgement is being worked out: never shown as final then. */
 export interface Judgement {
   walks: readonly WalkResult[]
+  /** The whole of it, for sheets; null: none yet. */
+  assessment: Assessment | null
   stale: boolean
   progress: { done: number; total: number; doing: string } | null
   problem: string | null

@@ -1,0 +1,9 @@
+import './app.css'
+import { render } from 'preact'
+import { App } from './routes.tsx'
+import { watchForUpdate } from './state/update-ready.ts'
+
+const place = document.getElementById('app')
+if (!place) throw new Error('app/no-place: index.html has no element with the id "app"')
+render(<App />, place)
+watchForUpdate()

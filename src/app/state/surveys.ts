@@ -1,0 +1,53 @@
+import { type ReadonlySignal, signal } from '@preact/signals'
+import { measuredIn } from '../../catalogue/measured-in.ts'
+import { type Problem, readSurveyFile, writeSurveyFile } from '../../record/file/index.ts'
+import { allFacts, emptyLog } from '../../record/log.ts'
+import { nameVenue } from '../../record/operations/venue.ts'
+import { newId } from './new-id.ts'
+import { phoneStore } from './phone.ts'
+import { choices } from './settings.ts'
+
+/** One line of the list of venues. */
+export interface OnPhone {
+  survey: string
+  name: string
+  /** When an entry last came in, ISO. */
+  changed: string
+}
+
+const rows = signal<readonly OnPhone[] | null>(null)
+/** The venues on this phone, the last changed first; null: not read yet. */
+export const surveysOnPhone: ReadonlySignal<readonly OnPhone[] | null> = rows
+
+export async function listSurveys(): Promise<void> {
+  rows.value = await (await phoneStore()).surveys()
+}
+
+export type Begun = { ok: true; survey: string; name: string } | { ok: false; problems: readonly Problem[] }
+
+/** A new venue with nothing but its name. */
+export async function beginVenue(name: string): Promise<Begun> {
+  const survey = newId('survey')
+  const store = await phoneStore()
+  const saved = await store.append(survey, nameVenue(emptyLog(survey), { name }), choices.value.person)
+  return saved.saved ? { ok: true, survey, name } : refused(saved)
+}
+
+/** Takes a survey file's facts in beside what is here: nothing here is changed or lost by it. */
+export async function takeInFile(text: string): Promise<Begun> {
+  const file = readSurveyFile(text, measuredIn)
+  if (!file.ok) return { ok: false, problems: file.problems }
+  const taken = await (await phoneStore()).takeIn(allFacts(file.log))
+  if (!taken.saved) return refused(taken)
+  return { ok: true, survey: file.survey.survey, name: file.survey.view.name }
+}
+
+/** A survey as a file, everything kept. */
+export async function surveyFile(survey: string): Promise<{ text: string; facts: number }> {
+  const log = await (await phoneStore()).openSurvey(survey)
+  return { text: writeSurveyFile(log), facts: allFacts(log).length }
+}
+
+function refused({ what, whatToDo }: { what: string; whatToDo: string }): Begun {
+  return { ok: false, problems: [{ path: '', expected: 'room on this phone', found: what, whatToDo }] }
+}

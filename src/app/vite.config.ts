@@ -1,0 +1,65 @@
+import { createHash } from 'node:crypto'
+import preact from '@preact/preset-vite'
+import { defineConfig, type Plugin } from 'vite'
+import { VitePWA } from 'vite-plugin-pwa'
+
+/** Paths are from this folder: the page lives in src/app, the build goes to dist. */
+export default defineConfig({
+  root: import.meta.dirname,
+  publicDir: '../../public',
+  build: {
+    outDir: '../../dist',
+    emptyOutDir: true,
+    manifest: true,
+    // A data: address for a small picture would need a wider policy than 'self'.
+    assetsInlineLimit: 0,
+    modulePreload: { polyfill: false },
+  },
+  worker: { format: 'es' },
+  plugins: [
+    preact({ reactAliasesEnabled: false }),
+    contentPolicy(),
+    VitePWA({
+      strategies: 'injectManifest',
+      srcDir: '../service-worker',
+      filename: 'sw.ts',
+      registerType: 'prompt',
+      injectRegister: false,
+      // public/manifest.webmanifest is written by hand.
+      manifest: false,
+      injectManifest: {
+        globPatterns: ['**/*.{js,css,html,svg,webmanifest}'],
+        globIgnores: ['cli.js', 'sw.js'],
+      },
+    }),
+  ],
+})
+
+/** Nothing may be asked of another machine, and no script may stand in the page. In development the bundler's client needs more. */
+function contentPolicy(): Plugin {
+  return {
+    name: 'content-policy',
+    apply: 'build',
+    transformIndexHtml: (html) => {
+      const inline = [...html.matchAll(/<script(?![^>]*\bsrc=)[^>]*>([\s\S]*?)<\/script>/g)].map(
+        ([, script = '']) => `'sha256-${createHash('sha256').update(script).digest('base64')}'`,
+      )
+      if (inline.length > 0) throw new Error(`the page has a script of its own: ${inline.join(' ')}`)
+      return [
+        { tag: 'meta', attrs: { 'http-equiv': 'Content-Security-Policy', content: policy }, injectTo: 'head-prepend' },
+      ]
+    },
+  }
+}
+
+const policy = [
+  "default-src 'none'",
+  "script-src 'self'",
+  "style-src 'self'",
+  "img-src 'self' blob: data:",
+  "connect-src 'self'",
+  "worker-src 'self'",
+  "manifest-src 'self'",
+  "base-uri 'none'",
+  "form-action 'none'",
+].join('; ')

@@ -1,0 +1,20 @@
+/// <reference lib="webworker" />
+import { cleanupOutdatedCaches, createHandlerBoundToURL, precacheAndRoute } from 'workbox-precaching'
+import { NavigationRoute, registerRoute } from 'workbox-routing'
+
+declare const self: ServiceWorkerGlobalScope & { __WB_MANIFEST: { url: string; revision: string | null }[] }
+
+// Everything the app is made of is kept on the phone at the first visit; nothing is ever fetched from elsewhere.
+precacheAndRoute(self.__WB_MANIFEST)
+cleanupOutdatedCaches()
+
+// Every address is the one page.
+registerRoute(new NavigationRoute(createHandlerBoundToURL('/index.html')))
+
+// The very first visit is served from here at once, so that it can go on without a network.
+self.addEventListener('activate', (event) => event.waitUntil(self.clients.claim()))
+
+// A newer worker waits until the person says so on the page.
+self.addEventListener('message', (event) => {
+  if (event.data?.type === 'SKIP_WAITING') void self.skipWaiting()
+})

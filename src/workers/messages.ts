@@ -1,0 +1,13 @@
+import type { Assessment, JudgeProgress } from '../judge/result.ts'
+import type { Survey } from '../record/survey.ts'
+
+/** What crosses between a page and the judge's worker: plain data only. */
+export type ToJudge =
+  | { kind: 'judge'; question: number; survey: Survey; on: string }
+  | { kind: 'cancel'; question: number }
+
+export type FromJudge =
+  | { kind: 'progress'; question: number; progress: JudgeProgress }
+  | { kind: 'done'; question: number; assessment: Assessment }
+  | { kind: 'cancelled'; question: number }
+  | { kind: 'problem'; question: number; problem: string }
