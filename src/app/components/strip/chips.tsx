@@ -1,4 +1,5 @@
 import { useId } from 'preact/hooks'
+import { sentence } from './sentence.ts'
 
 export interface Choice {
   value: string
@@ -15,7 +16,7 @@ export function Chips(props: {
   const name = useId()
   return (
     <fieldset class="chips">
-      <legend>{props.legend}</legend>
+      <legend>{sentence(props.legend)}</legend>
       <div class="chips-row">
         {props.choices.map((choice) => (
           <label key={choice.value} class="chip">

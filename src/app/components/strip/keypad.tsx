@@ -29,7 +29,7 @@ export function Keypad(props: { type(mark: string): void; rubOut(): void }) {
           {mark}
         </button>
       ))}
-      <button type="button" class="key" onClick={() => props.type(' ')}>
+      <button type="button" class="key word" onClick={() => props.type(' ')}>
         space
       </button>
       <button type="button" class="key" aria-label="rub out" onClick={props.rubOut}>

@@ -63,22 +63,20 @@ export type AsBefore = { says: string } | { refused: string }
 
 /** "As before" holds within one hour, one zone and one finish. `now` in ms. */
 export function finishAsBefore(part: Segment, before: Segment | undefined, now: number): AsBefore {
-  if (!before) return { refused: 'This is the first part: say its finish under Surface.' }
-  if (part.zone !== undefined && before.zone !== part.zone)
-    return { refused: 'Another zone: say its finish under Surface.' }
+  if (!before) return { refused: 'This is the first part: say its finish.' }
+  if (part.zone !== undefined && before.zone !== part.zone) return { refused: 'Another zone: say its finish.' }
   const finish = before.words.finish
-  if (!finish || finish.says === 'unknown')
-    return { refused: 'The finish of the part before is not known: say it under Surface.' }
+  if (!finish || finish.says === 'unknown') return { refused: 'The finish of the part before is not known: say it.' }
   if (finish.time === undefined || now - Date.parse(finish.time) > asBeforeLasts)
-    return { refused: 'The part before was looked at over an hour ago: say the finish under Surface.' }
+    return { refused: 'The part before was looked at over an hour ago: say the finish.' }
   if (before.features.some((one) => endsSurface(one.kind)))
-    return { refused: 'A mat or a change of floor lies before this part: say the finish under Surface.' }
+    return { refused: 'A mat or a change of floor lies before this part: say the finish.' }
   return { says: finish.says }
 }
 
 /** The zone of the part before, within the hour, or why it may not be taken over. */
 export function zoneAsBefore(part: Segment, before: Segment | undefined, now: number): AsBefore {
-  if (!before?.zone) return { refused: 'The part before has no zone: choose one under More.' }
+  if (!before?.zone) return { refused: 'The part before has no zone: choose one.' }
   if (part.zone !== undefined && part.zone !== before.zone) return { refused: 'This part lies in another zone.' }
   const latest = Math.max(
     ...Object.values(before.words)
@@ -87,7 +85,7 @@ export function zoneAsBefore(part: Segment, before: Segment | undefined, now: nu
     0,
   )
   if (now - latest > asBeforeLasts)
-    return { refused: 'The part before was looked at over an hour ago: choose the zone under More.' }
+    return { refused: 'The part before was looked at over an hour ago: choose the zone.' }
   return { says: before.zone }
 }
 

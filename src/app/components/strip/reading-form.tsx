@@ -20,6 +20,8 @@ export interface TypedReading {
 }
 
 export interface ReadingFormProps {
+  /** What is read, for the field's name. */
+  title: string
   /** Under which the instrument and the unit are remembered: "width". */
   quantity: string
   field: { quantity: FieldQuantity; unit: string; signed?: boolean }
@@ -113,9 +115,12 @@ export function ReadingForm(props: ReadingFormProps) {
       }}
     >
       <div class="reading-value">
-        <label for="reading-value">Value</label>
+        <label for="reading-value">
+          <span class="hidden">{props.title}: </span>Value
+        </label>
         <input
           id="reading-value"
+          class="value"
           data-first
           ref={field}
           inputMode="none"
@@ -154,6 +159,7 @@ export function ReadingForm(props: ReadingFormProps) {
           </div>
         </div>
       )}
+      <Keypad type={(mark) => change(text + mark)} rubOut={() => change(text.slice(0, -1))} />
       {unitsOffered(props.field).length > 1 && (
         <Chips
           legend="Unit"
@@ -173,13 +179,14 @@ export function ReadingForm(props: ReadingFormProps) {
           choose={setPlace}
         />
       )}
-      <Keypad type={(mark) => change(text + mark)} rubOut={() => change(text.slice(0, -1))} />
       {props.instruments.length > 0 && (
         <ToolChips offered={props.instruments} chosen={instrument} choose={setInstrument} />
       )}
-      <button type="submit" class="key primary" disabled={saving}>
-        {saving ? 'Saving' : 'Save'}
-      </button>
+      <div class="save-row">
+        <button type="submit" class="key primary" disabled={saving}>
+          {saving ? 'Saving' : 'Save'}
+        </button>
+      </div>
       {props.instruments.length > 0 && (
         <details class="reading-more">
           <summary>Found, spot, note</summary>

@@ -1,5 +1,6 @@
 import type { ComponentChildren } from 'preact'
 import { useEffect, useId, useRef } from 'preact/hooks'
+import { sentence } from './sentence.ts'
 
 /**
  * A real modal dialog from the bottom of the screen. The browser keeps the focus inside; on closing it goes back to
@@ -7,6 +8,8 @@ import { useEffect, useId, useRef } from 'preact/hooks'
  */
 export function Sheet(props: {
   title: string
+  /** Which part it is about, over the title. */
+  over: string
   close(): void
   back?: (() => void) | undefined
   said: { text: string; failed: boolean } | null
@@ -26,10 +29,11 @@ export function Sheet(props: {
     }
   }, [])
 
-  // A sheet that changes into another one says so: the focus goes to its heading.
+  // A sheet that changes into another one says so: the focus goes to its first field or its heading.
   useEffect(() => {
     dialog.current?.scrollTo(0, 0)
-    if (!dialog.current?.querySelector('[data-first]:focus')) heading.current?.focus()
+    const first = dialog.current?.querySelector<HTMLElement>('[data-first]')
+    ;(first ?? heading.current)?.focus()
   }, [props.title])
 
   return (
@@ -44,7 +48,7 @@ export function Sheet(props: {
     >
       <header class="strip-sheet-head">
         <h2 id={titleId} ref={heading} tabIndex={-1}>
-          {props.title}
+          <small>{props.over}</small> {sentence(props.title)}
         </h2>
         {props.back && (
           <button type="button" class="key" onClick={props.back}>

@@ -160,8 +160,8 @@ function You({ scene }: { scene: StripScene }) {
 
 /** One metre across, as a piece of tape with ticks every 0.1 m. */
 function AcrossScale({ scene, height }: { scene: StripScene; height: number }) {
-  const left = scene.scale.band.left
-  const y = height - 12
+  const { left } = scene.scale.words
+  const y = height - 16
   const metre = scene.scale.across
   const ticks = Array.from({ length: 11 }, (_, i) => `M${left + (i * metre) / 10} ${y}v${i % 5 === 0 ? 9 : 5}`).join('')
   return (

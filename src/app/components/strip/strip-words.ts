@@ -51,7 +51,10 @@ export function stripParts(walk: Walk, results: readonly SegmentResult[]): Strip
     return {
       id: segment.id,
       number: index + 1,
-      title: [`${index + 1} ${segment.name}`.trim(), ...sizes.filter((one) => one !== null)].join(', '),
+      title: [
+        segment.name ? `${index + 1} ${segment.name}` : `Part ${index + 1}`,
+        ...sizes.filter((one) => one !== null),
+      ].join(', '),
       length,
       width,
       turn: segment.turn ? turnAngle(segment.turn) : null,

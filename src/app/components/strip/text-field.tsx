@@ -1,4 +1,5 @@
 import { useEffect, useState } from 'preact/hooks'
+import { sentence } from './sentence.ts'
 
 /**
  * Free text. Kept as a draft while it is typed, saved with its own key or on Enter; it is never cleared by a save that
@@ -29,7 +30,7 @@ export function TextField(props: {
       }}
     >
       <label>
-        {props.label}
+        {sentence(props.label)}
         <input value={text} maxLength={400} onInput={(event) => setText(event.currentTarget.value)} />
       </label>
       <button type="submit" class="key" disabled={text.trim() === props.value || text.trim() === ''}>

@@ -2,6 +2,7 @@ import { useState } from 'preact/hooks'
 import { kinds } from '../../../catalogue/kinds.ts'
 import { setWord } from '../../../record/operations/answer.ts'
 import { addReading } from '../../../record/operations/reading.ts'
+import { sentence } from '../../components/strip/sentence.ts'
 import { featureWords, shown } from '../../components/strip/strip-words.ts'
 import { type How, HowChips } from './how-chips.tsx'
 import { addListed, featuresOf, listedItem } from './listed.ts'
@@ -39,11 +40,11 @@ export function AspectSheet(props: {
 
   return (
     <div class="sheet-keys">
-      <HowChips how={how} choose={setHow} />
       <button type="button" class="key primary" disabled={there.length > 0} onClick={() => void none()}>
         {aspectTitles[aspect].none}
         {aspect === 'overhead' && <small>rod at {shown(height)}, both shoulders</small>}
       </button>
+      <HowChips how={how} choose={setHow} />
       {there.length > 0 && <p class="soft">Off: a thing of this kind is listed on this part.</p>}
       {there.map((feature) => (
         <button
@@ -94,7 +95,7 @@ export function AddKind(props: {
           props.go({ at: 'feature', feature: id })
       }}
     >
-      {kind.name}
+      {sentence(kind.name)}
     </button>
   )
 }

@@ -5,6 +5,7 @@ import { setWord } from '../../../record/operations/answer.ts'
 import { setFeatureField } from '../../../record/operations/feature.ts'
 import type { Feature } from '../../../record/survey.ts'
 import { Chips } from '../../components/strip/chips.tsx'
+import { sentence } from '../../components/strip/sentence.ts'
 import { featureName, readingWords, shown } from '../../components/strip/strip-words.ts'
 import { type How, HowChips } from './how-chips.tsx'
 import { LedByFields } from './led-by-fields.tsx'
@@ -65,7 +66,7 @@ export function FeatureSheet(props: {
               class="key wide"
               onClick={() => props.go({ at: 'place', feature: feature.id, field: one })}
             >
-              {placeNames[one]}: {feature[one] === undefined ? 'not said' : shown(feature[one])}
+              {sentence(placeNames[one])}: {feature[one] === undefined ? 'not said' : shown(feature[one])}
             </button>
           ))}
         </>
@@ -143,8 +144,8 @@ function AttributeField(props: {
         onClick={() => props.go({ at: 'reading', holder: feature.id, quantity: attribute.id })}
       >
         {readings.length === 0
-          ? `${attribute.name}: ${needed}`
-          : readings.map((one) => readingWords(attribute.name, one)).join('; ')}
+          ? sentence(`${attribute.name}: ${needed}`)
+          : sentence(readings.map((one) => readingWords(attribute.name, one)).join('; '))}
       </button>
     )
   }

@@ -28,7 +28,15 @@ export function Keys(props: {
       <div class="strip-small-keys">
         {small.map(([label, route]) => (
           <button key={label} type="button" class="key" onClick={() => props.go(route)}>
-            {label}
+            {label === 'Overhead' ? (
+              <>
+                Over
+                <wbr />
+                head
+              </>
+            ) : (
+              label
+            )}
           </button>
         ))}
       </div>

@@ -3,6 +3,7 @@ import { kind } from '../../../catalogue/kinds.ts'
 import { items } from '../../../record/answers.ts'
 import { setWord } from '../../../record/operations/answer.ts'
 import { addReading } from '../../../record/operations/reading.ts'
+import { remove } from '../../../record/operations/removal.ts'
 import { addSegment, setSegmentField } from '../../../record/operations/segment.ts'
 import type { Answer, Reading } from '../../../record/survey.ts'
 import { openedAt } from '../../components/strip/card-clock.ts'
@@ -71,7 +72,18 @@ export function PlainSheet(props: {
         ? finish.refused
         : null
     const given = button.writes.every((one) => segment.words[one.item] && !segment.words[one.item]?.tooQuick)
-    return <PlainKey key={button.id} label={button.label} given={given} why={why} press={() => void press(button)} />
+    const hasty = button.writes.some((one) => segment.words[one.item]?.tooQuick)
+    return (
+      <PlainKey
+        key={button.id}
+        label={button.label}
+        given={given}
+        why={why}
+        hasty={hasty}
+        press={() => void press(button)}
+        instead={button.id === 'surface' ? { label: 'Say the surface', press: () => go({ at: 'surface' }) } : undefined}
+      />
+    )
   }
   const floor = plainButtons.filter((one) => one.group === 'floor')
   const asked = asksSingly(index) ? floor[single] : undefined
@@ -80,6 +92,8 @@ export function PlainSheet(props: {
   const swept = () =>
     recorder.write(
       (log) => [
+        // A sweep that was too quick was none: the new one stands alone.
+        ...(segment.readings.overhead ?? []).filter((one) => one.tooQuick).flatMap((one) => remove(log, one.id)),
         ...addReading(log, segment.id, 'overhead', {
           ...sweptReading(recorder, height),
           ...(quick() ? { tooQuick: true } : {}),
@@ -143,6 +157,7 @@ export function PlainSheet(props: {
               ? 'The length first.'
               : null
         }
+        hasty={segment.words.overhead?.tooQuick}
         press={() => void swept()}
       />
       <h3>4 Floor</h3>
@@ -198,6 +213,7 @@ export function PlainSheet(props: {
         label="Surroundings as before"
         given={segment.zone !== undefined}
         why={'refused' in zone ? zone.refused : null}
+        instead={{ label: 'Choose the zone', press: () => go({ at: 'part' }) }}
         press={() =>
           'says' in zone &&
           void recorder.write((log) => setSegmentField(log, segment.id, 'zone', zone.says), 'surroundings as before')
@@ -210,7 +226,17 @@ export function PlainSheet(props: {
   )
 }
 
-function PlainKey(props: { label: string; given: boolean; why: string | null; press(): void }) {
+function PlainKey(props: {
+  label: string
+  given: boolean
+  /** Why it is off. */
+  why: string | null
+  press(): void
+  /** Pressed sooner than anyone can look. */
+  hasty?: boolean | undefined
+  /** Where the answer is given while this key is off. */
+  instead?: { label: string; press(): void } | undefined
+}) {
   return (
     <>
       <button
@@ -221,10 +247,18 @@ function PlainKey(props: { label: string; given: boolean; why: string | null; pr
         disabled={props.why !== null}
         onClick={props.press}
       >
-        <span class="tick">{props.given ? 'Yes' : ''}</span>
+        <span class="tick" aria-hidden="true">
+          {props.given ? '✓' : ''}
+        </span>
         {props.label}
       </button>
       {props.why && <p class="soft">{props.why}</p>}
+      {props.hasty && <p class="soft">Too quick: walk it, look, and press again.</p>}
+      {props.why && props.instead && (
+        <button type="button" class="key wide" onClick={props.instead.press}>
+          {props.instead.label}
+        </button>
+      )}
     </>
   )
 }

@@ -10,8 +10,10 @@ export interface QuantityEntry {
   segment: Segment
   index: number
   feature: Feature | null
-  /** "clear width" */
+  /** "hinged door, clear width" */
   name: string
+  /** "clear width" */
+  short: string
   field: { quantity: FieldQuantity; unit: string }
   instruments: readonly InstrumentId[]
   readings: readonly Reading[]
@@ -47,6 +49,7 @@ export function quantityEntry(walk: Walk, holder: string, quantity: string): Qua
         index,
         feature: null,
         name: own.name,
+        short: own.name,
         field: { quantity: own.quantity, unit: own.unit },
         instruments: own.instruments,
         readings: segment.readings[quantity] ?? [],
@@ -59,6 +62,7 @@ export function quantityEntry(walk: Walk, holder: string, quantity: string): Qua
         index,
         feature,
         name: `${featureName(feature)}, ${attribute.name}`,
+        short: attribute.name,
         field: { quantity: attribute.quantity, unit: attribute.unit },
         instruments: toolsFor(attribute, feature),
         readings: feature.readings[quantity] ?? [],

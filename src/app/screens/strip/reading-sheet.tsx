@@ -57,6 +57,7 @@ export function ReadingSheet(props: {
   return (
     <ReadingForm
       key={`${holder} ${quantity}`}
+      title={`${entry.name} of part ${entry.index + 1}`}
       quantity={feature ? `${feature.kind} ${quantity}` : quantity}
       field={entry.field}
       instruments={entry.instruments}
@@ -87,6 +88,7 @@ export function PlaceSheet(props: { recorder: Recorder; feature: Feature; field:
   return (
     <ReadingForm
       key={`${feature.id} ${field}`}
+      title={name}
       quantity={field}
       field={{ quantity: 'length', unit: 'm' }}
       instruments={[]}

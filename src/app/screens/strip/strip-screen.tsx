@@ -4,6 +4,7 @@ import { type Aspect, aspects } from '../../../record/answers.ts'
 import { addSegment } from '../../../record/operations/segment.ts'
 import type { Walk } from '../../../record/survey.ts'
 import '../../components/strip/strip.css'
+import { usePageHead } from '../../components/page-head.tsx'
 import { StripMap } from '../../components/strip/strip-map.tsx'
 import { lengthOf, stripParts } from '../../components/strip/strip-words.ts'
 import { TapeRule } from '../../components/tape-rule.tsx'
@@ -37,6 +38,7 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
   const [at, setAt] = useState<string>(asked.segment)
   const [trail, setTrail] = useState<readonly SheetRoute[]>(asked.trail)
   const writer = useWriter(session)
+  const heading = usePageHead(walk.name)
   const index = Math.max(
     walk.segments.findIndex((one) => one.id === at),
     0,
@@ -85,27 +87,31 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
 
   return (
     <div class="strip-screen">
-      <header class="strip-top">
-        <p class="soft">{walk.name}</p>
-        <h1>
-          Part {index + 1} of {walk.segments.length}
-          {segment.name ? `, ${segment.name}` : ''}
-        </h1>
-        <p class="so-far">
-          <b>{lineOf(index)}</b>
-          {complete && result && <span> {result.sentence}</span>}
-          {!complete && (
-            <span class="soft">
-              {' '}
-              {openAspects(segment)
-                .map((one) => one.replace('-', ' '))
-                .join(', ')}
-            </span>
-          )}
-        </p>
-      </header>
       <main class="strip-main">
-        <StripMap parts={parts} current={index} pick={pick} />
+        <div class="strip-fold">
+          <header class="strip-top">
+            <p class="soft">
+              {walk.name}
+              {segment.name ? ` · ${segment.name}` : ''}
+            </p>
+            <h1 ref={heading} tabIndex={-1}>
+              Part {index + 1} of {walk.segments.length}
+            </h1>
+            <p class="so-far">
+              <b>{lineOf(index)}</b>
+              {complete && result && <span> {result.sentence}</span>}
+              {!complete && (
+                <span class="soft">
+                  {' '}
+                  {openAspects(segment)
+                    .map((one) => one.replace('-', ' '))
+                    .join(', ')}
+                </span>
+              )}
+            </p>
+          </header>
+          <StripMap parts={parts} current={index} pick={pick} />
+        </div>
         {half && session.draft.value && (
           <ResumeCard
             draft={session.draft.value}

@@ -29,7 +29,8 @@ export function StripSheets(props: {
   const onCard = trail.some((one) => one.at === 'plain')
   return (
     <Sheet
-      title={`Part ${recorder.index + 1}: ${titleOf(recorder.walk, route)}`}
+      over={`Part ${recorder.index + 1}`}
+      title={titleOf(recorder.walk, route)}
       close={() => setTrail([])}
       back={trail.length > 1 ? back : undefined}
       said={props.said}
@@ -103,7 +104,7 @@ function titleOf(walk: Walk, route: SheetRoute): string {
     case 'plain':
       return 'plain stretch'
     case 'reading':
-      return quantityEntry(walk, route.holder, route.quantity)?.name ?? route.quantity
+      return quantityEntry(walk, route.holder, route.quantity)?.short ?? route.quantity
     case 'place':
       return placeNames[route.field]
     case 'feature': {
