@@ -1,6 +1,6 @@
 import type { Assessment, JudgeProgress } from '../judge/result.ts'
 import type { Survey } from '../record/survey.ts'
-import type { FromJudge, ToJudge } from './messages.ts'
+import type { FromJudge, Memo, ToJudge } from './messages.ts'
 
 /**
  * The only door to the workers. One worker, one queue: questions are answered one after the other in the order asked,
@@ -34,6 +34,20 @@ export function judge(survey: Survey, on: string, tell: (progress: JudgeProgress
   return { answer: promise, cancel: () => cancel(question) }
 }
 
+/** Where the planner's memory is kept between one page and the next. */
+export interface MemoKeeper {
+  read(): Promise<Memo>
+  keep(memo: Memo): void
+  forget(): Promise<void>
+}
+
+let keeper: MemoKeeper | null = null
+
+/** Gives the judge a memory; to be called once, before the first question. */
+export function keepMemoWith(one: MemoKeeper): void {
+  keeper = one
+}
+
 function open(): { promise: Promise<Answer | null>; settle: (answer: Answer | null) => void } {
   let settle: (answer: Answer | null) => void = () => {}
   const promise = new Promise<Answer | null>((resolve) => {
@@ -45,7 +59,18 @@ function open(): { promise: Promise<Answer | null>; settle: (answer: Answer | nu
 function next() {
   if (current) return
   current = waiting.shift() ?? null
-  if (current) theWorker().postMessage(current.ask satisfies ToJudge)
+  if (current) void post(current.ask)
+}
+
+/** A new worker is first told what was worked out before. */
+async function post(ask: ToJudge) {
+  const asked = worker ?? start()
+  if (!worker) {
+    worker = asked
+    const memo = await keeper?.read().catch(() => null)
+    if (memo) asked.postMessage({ kind: 'remember', memo } satisfies ToJudge)
+  }
+  asked.postMessage(ask)
 }
 
 function cancel(question: number) {
@@ -60,10 +85,11 @@ function finish(answer: Answer | null) {
   next()
 }
 
-function theWorker(): Worker {
-  if (worker) return worker
-  worker = new Worker(new URL('./judge.worker.ts', import.meta.url), { type: 'module', name: 'judge' })
-  worker.addEventListener('message', ({ data }: MessageEvent<FromJudge>) => {
+function start(): Worker {
+  const started = new Worker(new URL('./judge.worker.ts', import.meta.url), { type: 'module', name: 'judge' })
+  started.addEventListener('message', ({ data }: MessageEvent<FromJudge>) => {
+    if (data.kind === 'learned') return keeper?.keep(data.memo)
+    if (data.kind === 'outdated') return void keeper?.forget()
     if (!current || data.question !== current.ask.question) return
     if (data.kind === 'progress') current.tell(data.progress)
     else if (data.kind === 'done') finish({ ok: true, assessment: data.assessment })
@@ -71,10 +97,10 @@ function theWorker(): Worker {
     else finish({ ok: false, problem: data.problem })
   })
   // A worker that died is thrown away: the next question starts another one.
-  worker.addEventListener('error', (event) => {
-    worker?.terminate()
-    worker = null
+  started.addEventListener('error', (event) => {
+    started.terminate()
+    if (worker === started) worker = null
     finish({ ok: false, problem: `The judgement stopped: ${event.message || 'its file could not be loaded'}.` })
   })
-  return worker
+  return started
 }

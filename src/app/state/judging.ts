@@ -1,11 +1,19 @@
 import { effect, type ReadonlySignal, signal } from '@preact/signals'
 import type { Survey } from '../../record/survey.ts'
-import { judge } from '../../workers/bridge.ts'
+import { judge, keepMemoWith } from '../../workers/bridge.ts'
+import { phoneStore } from './phone.ts'
 import type { Judgement } from './session.ts'
 import { dayOf } from './today.ts'
 
 /** Idle time after an entry before the judge starts anew, milliseconds. */
 const idle = 300
+
+// What the planner worked out is kept on the phone: a corner is solved once.
+keepMemoWith({
+  read: async () => (await phoneStore()).readWholeMemo(),
+  keep: (memo) => void phoneStore().then((store) => store.keepMemo(memo)),
+  forget: async () => (await phoneStore()).clearMemo(),
+})
 
 const none: Judgement = { walks: [], assessment: null, stale: true, progress: null, problem: null }
 
@@ -24,11 +32,12 @@ export function judgeOf(survey: ReadonlySignal<Survey>): ReadonlySignal<Judgemen
     const later = setTimeout(
       () => {
         const running = judge(asked, dayOf(asked), (progress) => {
-          judgement.value = { ...judgement.peek(), progress }
+          if (survey.peek() === asked) judgement.value = { ...judgement.peek(), progress }
         })
         cancel = running.cancel
         void running.answer.then((answer) => {
-          if (answer === null) return
+          // An answer to a question that has been overtaken says nothing of the survey as it is now.
+          if (answer === null || survey.peek() !== asked) return
           judgement.value = answer.ok
             ? { ...none, walks: answer.assessment.walks, assessment: answer.assessment, stale: false }
             : { ...none, stale: false, problem: answer.problem }
