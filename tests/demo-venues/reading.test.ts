@@ -1,24 +1,9 @@
-import { readFileSync } from 'node:fs'
-import { fileURLToPath } from 'node:url'
 import { describe, expect, test } from 'vitest'
 import { kind } from '../../src/catalogue/kinds.ts'
-import { readSurveyFile } from '../../src/record/file/index.ts'
 import type { Feature, SurveyView } from '../../src/record/survey.ts'
 import { siOf } from '../fixtures/demo/raw.ts'
+import { attributeOf, demoSurvey } from '../fixtures/demo/survey.ts'
 import { demoVenues } from '../fixtures/demo/venues.ts'
-
-const folder = fileURLToPath(new URL('../../demo-venues/', import.meta.url))
-
-function attributeOf(id: string, attribute: string) {
-  const found = kind(id)?.attributes.find((one) => one.id === attribute)
-  return found?.type === 'quantity' ? { quantity: found.quantity, unit: found.unit } : undefined
-}
-
-function viewOf(venue: string): SurveyView {
-  const read = readSurveyFile(readFileSync(`${folder}${venue}.json`, 'utf8'), attributeOf)
-  if (!read.ok) throw new Error(JSON.stringify(read.problems, null, 1))
-  return read.survey.view
-}
 
 /** Every feature and turn of the venue, with the segment it lies on. */
 function featuresOf(view: SurveyView): Feature[] {
@@ -28,7 +13,7 @@ function featuresOf(view: SurveyView): Feature[] {
 }
 
 describe.each(demoVenues)('%s as a file', (venue) => {
-  const view = viewOf(venue)
+  const { view } = demoSurvey(venue)
 
   test('is read without a problem, is a demo, and carries its day and card', () => {
     expect(view.demo).toBe(true)
