@@ -92,7 +92,7 @@ export function ReadingForm(props: ReadingFormProps) {
     remember(`unit ${props.quantity}`, unit)
     if (instrument) remember(`tool ${props.quantity}`, instrument)
     setSaving(true)
-    const saved = await props.save({
+    await props.save({
       raw: withUnit(typed, unit),
       value: reading.value,
       bound: reading.bound,
@@ -103,7 +103,6 @@ export function ReadingForm(props: ReadingFormProps) {
       ...(note.trim() ? { note: note.trim() } : {}),
     })
     setSaving(false)
-    if (!saved) setTrouble({ text: 'Not saved. What you typed is still here.', choices: [] })
   }
 
   return (

@@ -59,7 +59,7 @@ export function Sheet(props: {
           Close
         </button>
       </header>
-      <p class={props.said?.failed ? 'said failed' : 'said'} role="status">
+      <p class={props.said?.failed ? 'said failed' : 'said'} role={props.said?.failed ? 'alert' : 'status'}>
         {props.said?.text ?? ''}
       </p>
       {props.children}

@@ -137,7 +137,7 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
       </main>
       <footer class="strip-foot">
         <TapeRule />
-        <p class={writer.said?.failed ? 'said failed' : 'said'} role="status">
+        <p class={writer.said?.failed ? 'said failed' : 'said'} role={writer.said?.failed ? 'alert' : 'status'}>
           {trail.length === 0 ? (writer.said?.text ?? '') : ''}
         </p>
         <Keys
