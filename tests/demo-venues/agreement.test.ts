@@ -2,6 +2,7 @@ import { describe, expect, test } from 'vitest'
 import { judgeSurvey, runToEnd } from '../../src/judge/judge.ts'
 import type { Assessment, SegmentResult } from '../../src/judge/result.ts'
 import { clearance } from '../../src/leash/clearance.ts'
+import { loopNote } from '../../src/plan/loop-note.ts'
 import { demoSurvey } from '../fixtures/demo/survey.ts'
 import { type DemoVenue, demoVenues, expectedOf } from '../fixtures/demo/venues.ts'
 
@@ -33,6 +34,12 @@ function governingCheck({ checks, governing }: SegmentResult) {
   return checks.filter((one) => one.id === governing).sort((a, b) => high(b.ratio) - high(a.ratio))[0]
 }
 
+/** As near as three figures and the planner's own tolerance allow; null where the record says null. */
+function close(found: number | null | undefined, figure: number | null, within: number, where: string): void {
+  if (figure === null || found === null || found === undefined) expect(found, where).toBe(figure)
+  else expect(Math.abs(found - figure), `${where}: ${found} for ${figure}`).toBeLessThanOrEqual(within * figure)
+}
+
 function anyOf(governing: string | string[] | null): (string | null)[] {
   return Array.isArray(governing) ? governing : [governing]
 }
@@ -45,16 +52,12 @@ describe.each(demoVenues)('the judgement of %s agrees with its record', (venue) 
     const told = `${judged.sentence} ${JSON.stringify(judged.why.map((why) => why.text))}`
     expect(judged.verdict, told).toBe(wanted.verdict)
     expect(anyOf(wanted.governing), told).toContain(judged.governing)
-    if (wanted.ratio) {
-      const ratio = governingCheck(judged)?.ratio
-      for (const [end, figure] of wanted.ratio.figure.entries()) {
-        const found = ratio?.[end] ?? null
-        if (figure === null || found === null) expect(found, `${key}, end ${end}`).toBe(figure)
-        else
-          expect(Math.abs(found - figure), `${found} for ${figure}, end ${end}`).toBeLessThanOrEqual(
-            wanted.ratio.within ?? withinUsual,
-          )
-      }
+    const check = governingCheck(judged)
+    const within = wanted.ratio?.within ?? withinUsual
+    if (wanted.demand) close(check?.demand, wanted.demand.figure, within, `${key}, demand`)
+    if (wanted.capacity) close(check?.capacity, wanted.capacity.figure, within, `${key}, capacity`)
+    for (const [end, figure] of (wanted.ratio?.figure ?? []).entries()) {
+      close(check?.ratio?.[end], figure, within, `${key}, ratio at end ${end}`)
     }
     if (wanted.leash !== undefined) expect(judged.leash?.recommended).toBe(wanted.leash)
     expect(judged.pauses).toBe(wanted.pauses ?? 0)
@@ -75,4 +78,14 @@ describe.each(demoVenues)('the judgement of %s agrees with its record', (venue) 
     expect(on).toBe('2026-11-30')
     expect(team.name).toBe(demoSurvey(venue).view.team?.name)
   })
+})
+
+test('the loop of the museum misses its start by what its record says', () => {
+  const { figures } = expectedOf('museum')
+  const walk = demoSurvey('museum').view.walks.find((one) => one.id === 'gallery-round')
+  const note = walk ? loopNote(walk) : null
+  if (!note?.known) throw new Error('the loop has all its lengths and turns')
+  expect(note.misclosure.x).toBeCloseTo(figures['loop x']?.figure ?? Number.NaN, 3)
+  expect(note.misclosure.y).toBeCloseTo(figures['loop y']?.figure ?? Number.NaN, 3)
+  expect(note.misclosure.linear).toBeCloseTo(figures['loop misclosure']?.figure ?? Number.NaN, 3)
 })
