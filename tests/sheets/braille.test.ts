@@ -15,7 +15,7 @@ import { own } from '../../src/sheets/content/own.ts'
 import type { Outline } from '../../src/sheets/content/tree.ts'
 import { hostile } from '../fixtures/sheets/hostile.ts'
 import { clientSheet, sentencesOf, sheetOf, venueSheet } from '../fixtures/sheets/outlines.ts'
-import { needTool, run } from './system-tool.ts'
+import { needTool, run, toInstall } from './system-tool.ts'
 
 const require = createRequire(import.meta.url)
 const folder = `${require.resolve('liblouis-build').replace(/[^/]+$/, '')}tables/`
@@ -39,7 +39,7 @@ function bodyOf(text: string): string {
 }
 
 describe('against the translator of the system', () => {
-  beforeAll(() => needTool('lou_translate', 'liblouis-bin'))
+  beforeAll(() => needTool('lou_translate', 'liblouis-bin'), toInstall)
 
   /** The system's own liblouis and tables, one run for all texts. */
   function systemTranslate(texts: readonly string[], grade: Grade): Map<string, string> {

@@ -14,7 +14,7 @@ import { toWord } from '../../src/sheets/word/to-word.ts'
 import { hostile } from '../fixtures/sheets/hostile.ts'
 import { clientFacts, clientSheet, sheetOf, venueSheet } from '../fixtures/sheets/outlines.ts'
 import { assessment, survey } from '../fixtures/sheets/survey.ts'
-import { needTool, run } from './system-tool.ts'
+import { needTool, run, toInstall } from './system-tool.ts'
 import { unzip } from './unzip.ts'
 
 const require = createRequire(import.meta.url)
@@ -80,7 +80,7 @@ const forms: Record<string, Form> = {
   },
 }
 
-beforeAll(() => needTool('pdftotext', 'poppler-utils'))
+beforeAll(() => needTool('pdftotext', 'poppler-utils'), toInstall)
 
 describe.each(Object.entries(forms))('%s', (_name, { words, written }) => {
   it('states the same facts: verdict, leash, distances, cautions, end date', async () => {

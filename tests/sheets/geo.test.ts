@@ -93,6 +93,27 @@ describe('in local metres', () => {
   })
 })
 
+it('a U-turn comes back on its own line without an angle read, and says so', () => {
+  const view = smallView()
+  const around = { id: 'u', kind: 'u-turn', readings: {}, words: {} }
+  view.walks[0]?.segments.splice(
+    0,
+    3,
+    stretch('a', 10, { turn: around }),
+    stretch('b', 8, { turn: turn('t', 90) }),
+    stretch('c', 2),
+  )
+  const collection = read(toGeoJson(survey(view), assessment()))
+  expect(lineOf(thing(collection, 'b'))).toEqual([
+    [11, 2],
+    [3, 2],
+  ])
+  // A turn to the left when walking back along x leads down.
+  expect(lineOf(thing(collection, 'c'))[1]).toEqual([3, 0])
+  expect(thing(collection, 'a')?.properties).not.toHaveProperty('note')
+  expect(thing(collection, 'b')?.properties.note).toMatch(/drawn on each other/)
+})
+
 describe('what nobody measured has no place, and says why', () => {
   it('past a missing length', () => {
     const view = smallView()

@@ -9,7 +9,7 @@ import type { Outline, Section } from '../../src/sheets/content/tree.ts'
 import { toPdf } from '../../src/sheets/pdf/to-pdf.ts'
 import { hostile } from '../fixtures/sheets/hostile.ts'
 import { clientSheet, sentencesOf, sheetOf, venueSheet } from '../fixtures/sheets/outlines.ts'
-import { needTool, run } from './system-tool.ts'
+import { needTool, run, toInstall } from './system-tool.ts'
 
 const require = createRequire(import.meta.url)
 const faces = require.resolve('dejavu-fonts-ttf/package.json').replace('package.json', 'ttf/')
@@ -20,7 +20,7 @@ const material = {
 }
 const folder = mkdtempSync(join(tmpdir(), 'sheets-pdf-'))
 afterAll(() => rmSync(folder, { recursive: true }))
-beforeAll(() => needTool('pdfinfo', 'poppler-utils'))
+beforeAll(() => needTool('pdfinfo', 'poppler-utils'), toInstall)
 
 let files = 0
 async function write(sheet: Outline): Promise<string> {

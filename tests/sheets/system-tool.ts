@@ -1,18 +1,18 @@
 import { spawnSync } from 'node:child_process'
 
+/** A first installation may take minutes: the timeout for a hook that calls `needTool`. */
+export const toInstall = 300_000
+
 /**
  * Sees to it that a program of Debian is there: found, or installed where the tests run as root (as in continuous
- * integration). Otherwise says what to install.
+ * integration). Otherwise says what to install. Test files run side by side: each waits for the other's installation.
  */
 export function needTool(tool: string, debian: string): void {
-  if (found(tool)) return
-  if (process.getuid?.() === 0) {
-    const install = () =>
-      spawnSync('apt-get', ['install', '-y', '-q', '--no-install-recommends', debian], { stdio: 'ignore' })
-    if (install().status !== 0) {
-      spawnSync('apt-get', ['update', '-q'], { stdio: 'ignore' })
-      install()
-    }
+  const apt = (...args: string[]) =>
+    spawnSync('apt-get', ['-q', '-o', 'DPkg::Lock::Timeout=120', ...args], { stdio: 'ignore' })
+  for (let attempt = 0; attempt < 3 && !found(tool) && process.getuid?.() === 0; attempt++) {
+    if (attempt > 0) apt('update')
+    apt('install', '-y', '--no-install-recommends', debian)
   }
   if (!found(tool))
     throw new Error(`These tests read sheets with ${tool}: install it, on Debian by "apt-get install ${debian}".`)

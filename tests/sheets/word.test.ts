@@ -7,7 +7,7 @@ import type { Outline, Section } from '../../src/sheets/content/tree.ts'
 import { toWord } from '../../src/sheets/word/to-word.ts'
 import { hostile } from '../fixtures/sheets/hostile.ts'
 import { clientSheet, sentencesOf, sheetOf, venueSheet } from '../fixtures/sheets/outlines.ts'
-import { needTool, run } from './system-tool.ts'
+import { needTool, run, toInstall } from './system-tool.ts'
 import { unzip } from './unzip.ts'
 
 const parts = async (sheet: Outline) => unzip(await toWord(sheet))
@@ -146,31 +146,35 @@ it.each(Object.entries(hostile))('%s stays text in every part', async (_what, ty
 
 // LibreOffice takes minutes to install and seconds to start: in the long run alone.
 if (process.env.TAUTLINE_LONG === '1')
-  it('opens in LibreOffice, and its headings survive', async () => {
-    needTool('soffice', 'libreoffice-writer-nogui')
-    const folder = mkdtempSync(join(tmpdir(), 'sheets-word-'))
-    try {
-      for (const sheet of [clientSheet, venueSheet]) {
-        writeFileSync(join(folder, 'sheet.docx'), await toWord(sheet))
-        const profile = `-env:UserInstallation=file://${folder}/profile`
-        const args = [profile, '--headless', '--convert-to', 'html', '--outdir', folder, join(folder, 'sheet.docx')]
-        run('soffice', args, '', /^Warning: failed to launch javaldx[^\n]*\n?$/)
-        const html = readFileSync(join(folder, 'sheet.html'), 'utf8')
-        const found = [...html.matchAll(/<h(\d)[^>]*>(.*?)<\/h\1>/gs)].map(([, level, inner = '']) => [
-          `Heading${level}`,
-          inner
-            .replaceAll(/<[^>]*>/g, '')
-            .replaceAll(/\s+/g, ' ')
-            .trim(),
-        ])
-        expect(found).toEqual(headingsOf(sheet))
-        const listed = paragraphsOf(unzip(await toWord(sheet)).get('word/document.xml') ?? '').filter(
-          (one) => one.listed,
-        )
-        expect(html.match(/<li[ >]/g)).toHaveLength(listed.length)
-        expect(html.match(/<thead>/g)?.length ?? 0).toBe(sheet === venueSheet ? 1 : 0)
+  it(
+    'opens in LibreOffice, and its headings survive',
+    async () => {
+      needTool('soffice', 'libreoffice-writer-nogui')
+      const folder = mkdtempSync(join(tmpdir(), 'sheets-word-'))
+      try {
+        for (const sheet of [clientSheet, venueSheet]) {
+          writeFileSync(join(folder, 'sheet.docx'), await toWord(sheet))
+          const profile = `-env:UserInstallation=file://${folder}/profile`
+          const args = [profile, '--headless', '--convert-to', 'html', '--outdir', folder, join(folder, 'sheet.docx')]
+          run('soffice', args, '', /^Warning: failed to launch javaldx[^\n]*\n?$/)
+          const html = readFileSync(join(folder, 'sheet.html'), 'utf8')
+          const found = [...html.matchAll(/<h(\d)[^>]*>(.*?)<\/h\1>/gs)].map(([, level, inner = '']) => [
+            `Heading${level}`,
+            inner
+              .replaceAll(/<[^>]*>/g, '')
+              .replaceAll(/\s+/g, ' ')
+              .trim(),
+          ])
+          expect(found).toEqual(headingsOf(sheet))
+          const listed = paragraphsOf(unzip(await toWord(sheet)).get('word/document.xml') ?? '').filter(
+            (one) => one.listed,
+          )
+          expect(html.match(/<li[ >]/g)).toHaveLength(listed.length)
+          expect(html.match(/<thead>/g)?.length ?? 0).toBe(sheet === venueSheet ? 1 : 0)
+        }
+      } finally {
+        rmSync(folder, { recursive: true, force: true })
       }
-    } finally {
-      rmSync(folder, { recursive: true, force: true })
-    }
-  })
+    },
+    toInstall,
+  )

@@ -4,7 +4,15 @@ import type { Feature, Reading, Segment, SurveyView, Walk } from '../../record/s
 
 /** A segment on the plan, or in words why it has no place there. */
 export type Laid =
-  | { placed: true; from: Point; to: Point; heading: number; length: number }
+  | {
+      placed: true
+      from: Point
+      to: Point
+      heading: number
+      length: number
+      /** It comes after a U-turn, whose lanes lie on each other here: how far apart they are is not along the way. */
+      doubled: boolean
+    }
   | { placed: false; why: string; length: number | null }
 
 export interface LaidWalk {
@@ -15,7 +23,7 @@ export interface LaidWalk {
 
 /**
  * A walk as dead reckoning has it: each segment as long as its last exact tape length, each turn by its last exact angle, a
- * segment without a turn straight on, a U-turn half a circle to its side. Nothing is adjusted, so lengths stay those of the
+ * segment without a turn straight on, a U-turn without one half a circle. Nothing is adjusted, so lengths stay those of the
  * tape. Past the first missing length or angle nothing has a place.
  */
 export function layWalk(walk: Walk, view: SurveyView): LaidWalk {
@@ -24,6 +32,7 @@ export function layWalk(walk: Walk, view: SurveyView): LaidWalk {
   let from: Point = onPlan ? { x: start?.x ?? 0, y: start?.y ?? 0 } : { x: 0, y: 0 }
   let heading = onPlan ? (walk.heading ?? 0) : 0
   let lost: string | null = null
+  let doubled = false
   const segments = new Map<string, Laid>()
   for (const segment of walk.segments) {
     const length = lengthOf(segment)
@@ -35,9 +44,10 @@ export function layWalk(walk: Walk, view: SurveyView): LaidWalk {
     const turn = segment.turn ? turnOf(segment.turn) : 0
     const { points } = layTraverse([{ length, turn: turn ?? 0 }], from, heading)
     const to = points[1] ?? from
-    segments.set(segment.id, { placed: true, from, to, heading, length })
+    segments.set(segment.id, { placed: true, from, to, heading, length, doubled })
     from = to
     heading += turn ?? 0
+    doubled ||= segment.turn?.kind === 'u-turn'
     if (turn === null) lost = `the turn after "${segment.name}" is not known`
   }
   return { segments, onPlan }
@@ -59,9 +69,7 @@ function lengthOf({ readings }: Segment): number | null {
 }
 
 function turnOf(turn: Feature): number | null {
-  const angle = lastExact(turn.readings.angle)
-  if (angle !== null || turn.kind !== 'u-turn') return angle
-  return turn.side === 'left' ? Math.PI : turn.side === 'right' ? -Math.PI : null
+  return lastExact(turn.readings.angle) ?? (turn.kind === 'u-turn' ? Math.PI : null)
 }
 
 /** Never a mean: the last reading stands for the plan, as in the note on a loop. */

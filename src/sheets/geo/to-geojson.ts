@@ -107,6 +107,7 @@ function segmentThing(
       ledBy: segment.ledBy,
       lengthMetres: laid.length,
       ...(laid.placed ? {} : { noPlace: own(laid.why, 400) }),
+      ...(laid.placed && laid.doubled ? { note: 'After a U-turn: both lanes are drawn on each other.' } : {}),
       verdict: result?.verdict ?? 'not-known',
       governing: result?.governing ?? null,
       sentence: result ? ownWhole(result.sentence) : 'Nobody has judged this segment.',
