@@ -7,7 +7,7 @@ import { setTurn } from '../../../record/operations/feature.ts'
 import { remove } from '../../../record/operations/removal.ts'
 import type { Segment } from '../../../record/survey.ts'
 import type { StripPart } from '../../components/strip/layout-part.ts'
-import { answerWords, featureWords, readingWords, turnWords } from '../../components/strip/strip-words.ts'
+import { answerWords, featureWords, lengthOf, readingWords, turnWords } from '../../components/strip/strip-words.ts'
 import { removeListed } from './listed.ts'
 import type { Recorder } from './recorder.ts'
 import { type SheetRoute, sheetOfAspect } from './sheet-route.ts'
@@ -28,9 +28,11 @@ export function PartList(props: {
   parts: readonly StripPart[]
   verdictWords(index: number): string
   pick(index: number): void
+  openNext(): void
   go(route: SheetRoute): void
 }) {
   const { recorder } = props
+  const last = recorder.walk.segments.at(-1)
   return (
     <section class="part-list" aria-labelledby="part-list-title">
       <h2 id="part-list-title">Parts of this walk</h2>
@@ -60,6 +62,11 @@ export function PartList(props: {
           )
         })}
       </ol>
+      {last && lengthOf(last) !== null && (
+        <button type="button" class="key wide" onClick={props.openNext}>
+          Open part {recorder.walk.segments.length + 1}
+        </button>
+      )}
     </section>
   )
 }

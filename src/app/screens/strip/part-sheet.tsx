@@ -1,3 +1,4 @@
+import { remove } from '../../../record/operations/removal.ts'
 import { setSegmentField } from '../../../record/operations/segment.ts'
 import { Chips } from '../../components/strip/chips.tsx'
 import { leaderWords } from '../../components/strip/strip-words.ts'
@@ -46,6 +47,16 @@ export function PartSheet(props: { recorder: Recorder; done(): void }) {
         value={segment.note ?? ''}
         save={(text) => set('note', text, 'note')}
       />
+      <button
+        type="button"
+        class="key wide"
+        onClick={async () => {
+          if (await recorder.write((log) => remove(log, segment.id), `part ${index + 1} removed with all on it`))
+            props.done()
+        }}
+      >
+        Remove this part
+      </button>
       <button type="button" class="key primary" onClick={props.done}>
         Done
       </button>

@@ -38,8 +38,12 @@ export function ReadingSheet(props: {
       person: session.person.value,
       time: new Date().toISOString(),
     }
-    const next = props.opensNext && quantity === 'length' && isLast ? session.newId('segment') : null
-    const words = readingWords(entry.name, reading)
+    const next =
+      props.opensNext && quantity === 'length' && isLast && entry.readings.length === 0
+        ? session.newId('segment')
+        : null
+    const long = !feature && quantity === 'length' && reading.value > longestPart
+    const words = `${readingWords(entry.name, reading)}${long ? '. Over 25 m: end the part sooner, at a sign' : ''}`
     const saved = await recorder.write(
       (log) => [
         ...addReading(log, holder, quantity, reading),
@@ -69,6 +73,9 @@ export function ReadingSheet(props: {
     />
   )
 }
+
+/** A part is a stretch between two decisions, 25 m at most. */
+const longestPart = 25
 
 /** Nothing is inherited: a new part asks what a robot-led one must answer until it is said that another leads. */
 export function nextPart(id: string) {

@@ -1,21 +1,21 @@
 import { useMemo, useState } from 'preact/hooks'
 import { useLocation } from 'preact-iso'
-import { type Aspect, aspects } from '../../../record/answers.ts'
 import { addSegment } from '../../../record/operations/segment.ts'
 import type { Walk } from '../../../record/survey.ts'
 import '../../components/strip/strip.css'
 import { usePageHead } from '../../components/page-head.tsx'
 import { StripMap } from '../../components/strip/strip-map.tsx'
-import { lengthOf, stripParts } from '../../components/strip/strip-words.ts'
+import { stripParts } from '../../components/strip/strip-words.ts'
 import { TapeRule } from '../../components/tape-rule.tsx'
 import type { Session } from '../../state/session.ts'
+import { askedFor } from './asked-for.ts'
 import { placeOfDraft } from './draft-route.ts'
 import { Keys } from './keys.tsx'
 import { PartList } from './part-list.tsx'
 import { nextPart } from './reading-sheet.tsx'
 import { type Recorder, useWriter } from './recorder.ts'
 import { ResumeCard } from './resume-card.tsx'
-import { type SheetRoute, sheetOfAspect } from './sheet-route.ts'
+import type { SheetRoute } from './sheet-route.ts'
 import { openAspects, soFarLine } from './so-far-line.ts'
 import { StripSheets } from './strip-sheets.tsx'
 
@@ -132,6 +132,11 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
           parts={parts}
           verdictWords={lineOf}
           pick={pick}
+          openNext={async () => {
+            const next = session.newId('segment')
+            const label = `part ${walk.segments.length + 1} is open`
+            if (await writer.write((log) => addSegment(log, walk.id, nextPart(next)), label)) setAt(next)
+          }}
           go={(route) => setTrail([route])}
         />
       </main>
@@ -184,18 +189,4 @@ function FirstPart({ session, walk }: { session: Session; walk: Walk }) {
       <p role="status">{writer.said?.text ?? ''}</p>
     </main>
   )
-}
-
-/** The part to stand at: the one asked for in the address, else the open one, else the first. */
-function askedFor(walk: Walk, open: string | undefined): { segment: string; trail: SheetRoute[] } {
-  const asked = open?.split('/') ?? []
-  const named = walk.segments.find((one) => one.id === asked[0])
-  const what = asked[1] as Aspect | undefined
-  if (named)
-    return {
-      segment: named.id,
-      trail: what && aspects.includes(what) ? [sheetOfAspect(what, named.id)] : [],
-    }
-  const unfinished = walk.segments.find((one) => lengthOf(one) === null) ?? walk.segments[0]
-  return { segment: unfinished?.id ?? '', trail: [] }
 }

@@ -1,0 +1,162 @@
+import { useState } from 'preact/hooks'
+import { writeSurveyFile } from '../../../record/file/index.ts'
+import { takeSafeSide } from '../../../record/operations/reading.ts'
+import { FileKey } from '../../components/file-key.tsx'
+import { PageHead } from '../../components/page-head.tsx'
+import { StatusLine } from '../../components/status-line.tsx'
+import { TapeProgress } from '../../components/tape-rule.tsx'
+import { textOf } from '../../state/file-choice.ts'
+import type { Session } from '../../state/session.ts'
+import { useWriter } from '../strip/recorder.ts'
+import { checkCopy, copyName } from './copy-check.ts'
+import { handOver } from './hand-over.ts'
+import { type Unfinished, unfinished } from './unfinished.ts'
+
+const harmWords = {
+  fall: 'Fall',
+  head: 'Head',
+  trap: 'Trap',
+  road: 'Road or people',
+  comfort: 'Comfort and finding the way',
+} as const
+
+/** What is not finished, worst harm first, each one tap from its entry; then the copy, made and read back. */
+export function LeavingScreen(props: { session: Session; walk: string }) {
+  const { session } = props
+  const { survey, view } = session.survey.value
+  const walk = view.walks.find((one) => one.id === props.walk)
+  if (!walk)
+    return (
+      <main class="page">
+        <p>This walk is not on this phone.</p>
+      </main>
+    )
+  const judgement = session.judgement.value
+  const result = judgement.stale ? null : (judgement.walks.find((one) => one.id === walk.id) ?? null)
+  const address = `/venue/${survey}/walk/${walk.id}`
+  return (
+    <main class="page">
+      <PageHead
+        title="Before you leave"
+        back={{ href: address, label: walk.name }}
+        about={<p>Everything entered is saved on this phone. What has no answer stands as not looked at.</p>}
+      />
+      {judgement.progress && (
+        <TapeProgress
+          share={judgement.progress.done / Math.max(judgement.progress.total, 1)}
+          label="Judging the walk"
+        />
+      )}
+      {judgement.problem && <p class="trouble">The walk could not be judged: {judgement.problem}</p>}
+      {judgement.stale && <p class="soft">Being judged: readings too close to call are added when it is done.</p>}
+      <LeftToDo session={session} judged={result !== null} list={unfinished(walk, result)} address={address} />
+      <Copy session={session} />
+    </main>
+  )
+}
+
+function LeftToDo(props: { session: Session; judged: boolean; list: readonly Unfinished[]; address: string }) {
+  const writer = useWriter(props.session)
+  const { list } = props
+  if (list.length === 0)
+    return (
+      <p>
+        <b>
+          {props.judged ? 'Nothing is left open on this walk.' : 'Every question has an answer; it is not judged yet.'}
+        </b>
+      </p>
+    )
+  const groups = (Object.keys(harmWords) as (keyof typeof harmWords)[]).filter((harm) =>
+    list.some((one) => one.harm === harm),
+  )
+  return (
+    <section class="part" aria-labelledby="left-title">
+      <h2 id="left-title">
+        {list.length} {list.length === 1 ? 'thing' : 'things'} not finished
+      </h2>
+      <StatusLine text={writer.said?.text ?? ''} failed={writer.said?.failed ?? false} />
+      {groups.map((harm) => (
+        <div key={harm} class="stack">
+          <h3>{harmWords[harm]}</h3>
+          <ul class="rows">
+            {list
+              .filter((one) => one.harm === harm)
+              .map((one) => (
+                <li key={one.key}>
+                  <span>{one.text}</span>
+                  {one.advice && <span class="soft">{one.advice}</span>}
+                  <span class="keys">
+                    <a class="key" href={entryAddress(props.address, one)}>
+                      Go to it<span class="hidden">: {one.text}</span>
+                    </a>
+                    {one.tooClose && (
+                      <button
+                        type="button"
+                        class="key"
+                        onClick={() =>
+                          void writer.write((log) => takeSafeSide(log, one.tooClose ?? ''), 'the safe side is taken')
+                        }
+                      >
+                        Take the safe side<span class="hidden">: {one.text}</span>
+                      </button>
+                    )}
+                  </span>
+                </li>
+              ))}
+          </ul>
+        </div>
+      ))}
+    </section>
+  )
+}
+
+function entryAddress(address: string, one: Unfinished): string {
+  const parts = [one.segment, ...(one.entry?.split('/') ?? [])].filter((part) => part !== null)
+  return `${address}?open=${parts.map((part) => encodeURIComponent(part)).join('/')}`
+}
+
+function Copy({ session }: { session: Session }) {
+  const [said, setSaid] = useState({ text: '', failed: false })
+  const [made, setMade] = useState(false)
+
+  const check = (text: string, words: (facts: number) => string) => {
+    const checked = checkCopy(text, session.log())
+    setSaid(
+      checked.ok
+        ? { text: words(checked.facts), failed: false }
+        : { text: `${checked.what} ${checked.whatToDo}`, failed: true },
+    )
+  }
+  const make = async () => {
+    const text = writeSurveyFile(session.log())
+    const handed = await handOver(copyName(session.survey.value.view.name, new Date()), text)
+    if (handed === 'stopped') return setSaid({ text: 'No copy was made. Make it before you leave.', failed: true })
+    setMade(true)
+    check(text, (facts) => `Ready to leave: copy checked. ${facts} entries written and read back the same.`)
+  }
+
+  return (
+    <section class="part" aria-labelledby="copy-title">
+      <h2 id="copy-title">The copy</h2>
+      <p class="soft">A file with every entry. A phone can be lost: send it, or keep it elsewhere.</p>
+      <button type="button" class="key primary wide" onClick={() => void make()}>
+        Make the copy
+      </button>
+      <StatusLine text={said.text} failed={said.failed} />
+      {made && (
+        <>
+          <p>Surer still: open the file where it was saved, and it is compared with this phone.</p>
+          <FileKey
+            label="Check the saved file"
+            accept=".json,application/json"
+            chosen={async (file) => {
+              const read = await textOf(file)
+              if (read.ok) check(read.text, (facts) => `The saved file holds the same ${facts} entries as this phone.`)
+              else setSaid({ text: read.what, failed: true })
+            }}
+          />
+        </>
+      )}
+    </section>
+  )
+}
