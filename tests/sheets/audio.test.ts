@@ -75,6 +75,12 @@ describe.each([
   })
 })
 
+it('reads a table row by row, each cell with its heading, an empty one too', () => {
+  const script = toAudio(venueSheet)
+  expect(script).toContain('Row 1 of 42.\nWhere: Past the lockers.\nWhat: Width 820 mm for 913 mm.\n')
+  expect(script).toContain('Clause: blank.\nOwner: not named.\n')
+})
+
 it('a draft says so first', () => {
   expect(audioTracks(venueSheet)[0]?.lines[0]).toBe('DRAFT.')
   expect(audioTracks(clientSheet)[0]?.lines[0]).not.toMatch(/DRAFT/)

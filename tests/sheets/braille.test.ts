@@ -145,7 +145,8 @@ describe('layout, uncontracted', () => {
 
 it('writes tables as lists: each cell with its heading', () => {
   const text = brf(venue, at(1))
-  expect(text).toContain(',WHERE3 ,PAST THE LOCKERS\r\n  ,WHAT3 ,WIDTH #HBJ MM FOR #IAC MM\r\n')
+  expect(text).toContain('  ,CLAUSE3 "<BLANK">\r\n')
+  expect(text).toContain(',ROW #A OF #DB\r\n  ,WHERE3 ,PAST THE LOCKERS\r\n  ,WHAT3 ,WIDTH #HBJ MM FOR #IAC MM\r\n')
 })
 
 describe('a letter without braille is refused in words', () => {

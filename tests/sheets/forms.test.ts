@@ -9,7 +9,9 @@ import { own } from '../../src/sheets/content/own.ts'
 import type { Outline, Refusal } from '../../src/sheets/content/tree.ts'
 import { toCsv } from '../../src/sheets/csv/to-csv.ts'
 import { toGeoJson } from '../../src/sheets/geo/to-geojson.ts'
+import { toHtml } from '../../src/sheets/html/to-html.ts'
 import { toPdf } from '../../src/sheets/pdf/to-pdf.ts'
+import { toText } from '../../src/sheets/text/to-text.ts'
 import { toWord } from '../../src/sheets/word/to-word.ts'
 import { hostile } from '../fixtures/sheets/hostile.ts'
 import { clientFacts, clientSheet, sheetOf, venueSheet } from '../fixtures/sheets/outlines.ts'
@@ -28,7 +30,16 @@ const tablesIn = require.resolve('liblouis-build').replace(/[^/]+$/, 'tables/')
 const tables = Object.fromEntries(tableFiles.map((name) => [name, readFileSync(tablesIn + name, 'utf8')]))
 const braille = louis(require('liblouis-build') as LouisModule, tables as Record<TableFile, string>)
 
-const squeezed = (text: string) => text.replaceAll(/[\s\u00a0]+/g, ' ')
+/** Words as one line, without the marks that only keep a right-to-left name in its place. */
+const squeezed = (text: string) => text.replaceAll(/[\u2068\u2069]/g, '').replaceAll(/[\s\u00a0]+/g, ' ')
+
+const entities: Record<string, string> = { amp: '&', lt: '<', gt: '>', quot: '"', apos: "'", '#39': "'" }
+/** What is read of a page of marks. */
+function readable(marked: string): string {
+  const text = marked.replaceAll(/<[^>]*>/g, '')
+  return squeezed(text.replaceAll(/&([\w#]+);/g, (whole, name: string) => entities[name] ?? whole))
+}
+
 const noBlanks = (cells: string) => cells.replaceAll(' ', '')
 
 /** Each form of an outline: the words that it holds as one line, and how a fact is written in it. A Refusal comes as it is. */
@@ -36,7 +47,7 @@ interface Form {
   words: (sheet: Outline) => Promise<string | Refusal>
   written: (fact: string) => string
 }
-const plain = (fact: string) => fact
+const plain = squeezed
 const inBraille = (grade: 1 | 2): Form => ({
   words: async (sheet) => {
     const made = toBraille(sheet, braille(grade))
@@ -52,6 +63,16 @@ const inBraille = (grade: 1 | 2): Form => ({
 })
 const forms: Record<string, Form> = {
   audio: { words: async (sheet) => squeezed(toAudio(sheet)), written: plain },
+  text: { words: async (sheet) => squeezed(toText(sheet)), written: plain },
+  html: {
+    words: async (sheet) =>
+      readable(
+        toHtml(sheet)
+          .replace(/<head>.*<\/head>/s, '')
+          .replaceAll(/<\/(p|li|h\d|t[dh]|caption)>/g, ' '),
+      ),
+    written: plain,
+  },
   'braille, uncontracted': inBraille(1),
   'braille, contracted': inBraille(2),
   pdf: {
@@ -66,15 +87,7 @@ const forms: Record<string, Form> = {
   word: {
     words: async (sheet) => {
       const document = unzip(await toWord(sheet)).get('word/document.xml') ?? ''
-      const text = document.replaceAll('</w:p>', ' ').replaceAll(/<[^>]*>/g, '')
-      return squeezed(
-        text
-          .replaceAll('&lt;', '<')
-          .replaceAll('&gt;', '>')
-          .replaceAll('&quot;', '"')
-          .replaceAll('&apos;', "'")
-          .replaceAll('&amp;', '&'),
-      )
+      return readable(document.replaceAll('</w:p>', ' '))
     },
     written: plain,
   },

@@ -224,11 +224,47 @@ describe('on the earth', () => {
   })
 })
 
+const override = {
+  verdict: 'with-help',
+  machine: 'not-known',
+  reason: '',
+  name: '',
+  role: 'assessor',
+  until: '2027-01-31',
+} as const
+
+it('a practitioner’s last word stands beside the verdict, with what was measured', () => {
+  const segments = [
+    segmentResult('a', { verdict: 'with-help', override: { ...override, reason: 'Walked twice', name: 'Ada' } }),
+  ]
+  const collection = read(toGeoJson(survey(), assessment({ walks: [walkResult({ segments })] })))
+  expect(thing(collection, 'a')?.properties.override).toEqual({
+    verdict: 'with-help',
+    machine: 'not-known',
+    reason: 'Walked twice',
+    name: 'Ada',
+    role: 'assessor',
+    until: '2027-01-31',
+  })
+})
+
 it.each(Object.entries(hostile))('%s stays text', (_what, text) => {
   const view = smallView()
   view.walks[0]?.segments.push(stretch('h', 1, { name: text }))
   view.places.push({ id: 'p', name: text })
-  const judged = assessment({ walks: [walkResult({ segments: [segmentResult('h', { sentence: text })] })] })
+  const judged = assessment({
+    walks: [
+      walkResult({
+        segments: [
+          segmentResult('h', {
+            sentence: text,
+            conditions: [text],
+            override: { ...override, reason: text, name: text },
+          }),
+        ],
+      }),
+    ],
+  })
   const file = toGeoJson(survey(view), judged)
   const collection = read(file)
   expect(String(thing(collection, 'h')?.properties.name).length).toBeGreaterThan(3)

@@ -53,11 +53,12 @@ function passages(section: Section, above: readonly string[]): Passage[] {
 function linesOf(blocks: readonly Block[]): string[] {
   return blocks.flatMap((block) => {
     if (block.kind === 'paragraph') return [block.line.text]
-    if (block.kind === 'verdict') return [block.text]
+    if (block.kind === 'verdict') return [`Verdict: ${block.text}`]
     if (block.kind === 'list') return block.items.map(({ text }) => text)
-    const rows = block.rows.flatMap((cells) =>
-      cells.flatMap((cell, i) => (cell === '' ? [] : [sentence(`${block.head[i] ?? ''}: ${cell}`)])),
-    )
+    const rows = block.rows.flatMap((cells, i) => [
+      `Row ${i + 1} of ${block.rows.length}.`,
+      ...cells.map((cell, column) => sentence(`${block.head[column] ?? ''}: ${cell === '' ? 'blank' : cell}`)),
+    ])
     return [sentence(block.caption), ...rows]
   })
 }

@@ -54,17 +54,18 @@ function blockPassages(block: Block, braille: Braille): Passage[] {
     case 'paragraph':
       return [passage(block.line, paragraphs)]
     case 'verdict':
-      return [passage({ text: block.text }, paragraphs)]
+      return [passage({ text: `Verdict: ${block.text}` }, paragraphs)]
     case 'list':
       return block.items.map((item) => passage(item, items))
     case 'table':
       return [
         { heading: true, lines: wrap(braille({ text: block.caption }), headings[1] ?? paragraphs) },
-        ...block.rows.flatMap((cells) =>
-          cells.flatMap((cell, i) =>
-            cell === '' ? [] : [passage({ text: `${block.head[i] ?? ''}: ${cell}` }, i === 0 ? items : values)],
+        ...block.rows.flatMap((cells, i) => [
+          passage({ text: `Row ${i + 1} of ${block.rows.length}` }, items),
+          ...cells.map((cell, column) =>
+            passage({ text: `${block.head[column] ?? ''}: ${cell === '' ? '(blank)' : cell}` }, values),
           ),
-        ),
+        ]),
       ]
   }
 }

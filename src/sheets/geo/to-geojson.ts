@@ -117,10 +117,15 @@ function segmentThing(
       cautions: (result?.cautions ?? []).map(({ harm, text }) => ({ harm, text: ownWhole(text) })),
       why: (result?.why ?? []).map(({ kind: sort, text }) => ({ kind: sort, text: ownWhole(text) })),
       missing: result?.missing ?? [],
-      conditions: result?.conditions ?? [],
-      ...(result?.override ? { override: result.override } : {}),
+      conditions: (result?.conditions ?? []).map((one) => ownWhole(one)),
+      ...(result?.override ? { override: spoken(result.override) } : {}),
     },
   }
+}
+
+/** A practitioner's last word stands beside the verdict, with what was measured. */
+function spoken(override: NonNullable<SegmentResult['override']>): Record<string, string> {
+  return Object.fromEntries(Object.entries(override).map(([key, text]) => [key, ownWhole(text)]))
 }
 
 function pointThing(

@@ -96,7 +96,11 @@ function writeBlock({ doc, root, size }: Writer, block: Block): void {
       const [x, y] = [margins.left, doc.y]
       const figure = { alt: shapeWords[block.verdict], bbox: [x, y, x + side, y + side] }
       root.add(doc.struct('Figure', figure).add(() => drawShape(doc, block.verdict, x, y + 2, side)))
-      root.add(doc.struct('P', () => doc.text(held(block.text), left, y, { ...words, width: measure - side - 10 })))
+      root.add(
+        doc.struct('P', () =>
+          doc.text(held(`Verdict: ${block.text}`), left, y, { ...words, width: measure - side - 10 }),
+        ),
+      )
       break
     }
     case 'list': {

@@ -87,7 +87,7 @@ function blockOf(block: Block): Piece[] {
     case 'paragraph':
       return [new Paragraph({ children: [words(block.line.text)] })]
     case 'verdict':
-      return [new Paragraph({ style: 'Verdict', children: [words(block.text)] })]
+      return [new Paragraph({ style: 'Verdict', children: [words(`Verdict: ${block.text}`)] })]
     case 'list':
       return block.items.map(
         ({ text }) => new Paragraph({ numbering: { reference: bullets, level: 0 }, children: [words(text)] }),
