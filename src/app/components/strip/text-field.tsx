@@ -19,7 +19,7 @@ export function TextField(props: {
     if (text === props.value) return
     const later = setTimeout(() => keep(text), 300)
     return () => clearTimeout(later)
-  }, [text])
+  }, [text, props.value])
 
   return (
     <form

@@ -1,0 +1,146 @@
+import { describe, expect, test } from 'vitest'
+import {
+  asksSingly,
+  finishAsBefore,
+  isTooQuick,
+  plainButtons,
+  zoneAsBefore,
+} from '../../src/app/components/strip/plain-rules.ts'
+import { addListed, featuresOf, removeListed } from '../../src/app/screens/strip/listed.ts'
+import type { Recorder } from '../../src/app/screens/strip/recorder.ts'
+import { openAspects, soFarLine } from '../../src/app/screens/strip/so-far-line.ts'
+import { sweptHeight } from '../../src/app/screens/strip/swept-height.ts'
+import { type Item, items, neverInherited } from '../../src/record/answers.ts'
+import { foldSurvey } from '../../src/record/fold.ts'
+import { appendDrafts, emptyLog } from '../../src/record/log.ts'
+import { addSegment } from '../../src/record/operations/segment.ts'
+import { addWalk } from '../../src/record/operations/walk.ts'
+import type { Segment } from '../../src/record/survey.ts'
+import { defaultTeamCard } from '../../src/record/team-card.ts'
+
+const noon = Date.parse('2026-11-30T12:00:00Z')
+
+function segment(over: Partial<Segment> = {}): Segment {
+  return { id: 's', name: '', ledBy: 'robot', readings: {}, words: {}, features: [], ...over }
+}
+
+const carpet = { says: 'carpet', how: 'swept' as const, time: '2026-11-30T11:30:00Z' }
+
+describe('the plain stretch card', () => {
+  test('its keys name every item in words once, but those with a key of their own', () => {
+    const own: Item[] = ['overhead', 'shoreline', 'end-sign']
+    const named = plainButtons.flatMap((one) => one.writes.map((write) => write.item))
+    const wanted = (Object.keys(items) as Item[]).filter((item) => !own.includes(item))
+    expect(named.toSorted()).toEqual(wanted.toSorted())
+  })
+
+  test('overhead, edge, step and door are never taken over from the part before', () => {
+    for (const button of plainButtons)
+      for (const write of button.writes)
+        if (neverInherited.includes(write.item)) expect([write.item, write.how]).toEqual([write.item, 'swept'])
+  })
+
+  test('15 m confirmed after 9.9 s is too quick, after 10 s is not', () => {
+    expect(isTooQuick(15, noon, noon + 9_900)).toBe(true)
+    expect(isTooQuick(15, noon, noon + 10_000)).toBe(false)
+  })
+
+  test('of ten parts two ask one by one', () => {
+    expect(Array.from({ length: 10 }, (_, i) => asksSingly(i)).filter(Boolean)).toHaveLength(2)
+  })
+
+  test('the finish is as before within the hour, the zone and the finish alone', () => {
+    const before = segment({ words: { finish: carpet }, zone: 'hall' })
+    expect(finishAsBefore(segment(), before, noon)).toEqual({ says: 'carpet' })
+    expect(finishAsBefore(segment({ zone: 'hall' }), before, noon)).toEqual({ says: 'carpet' })
+    expect(finishAsBefore(segment({ zone: 'yard' }), before, noon)).toHaveProperty('refused')
+    expect(finishAsBefore(segment(), before, noon + 31 * 60_000)).toHaveProperty('refused')
+    expect(finishAsBefore(segment(), undefined, noon)).toHaveProperty('refused')
+    const mat = { id: 'm', kind: 'floor-edge', readings: {}, words: {} }
+    expect(finishAsBefore(segment(), { ...before, features: [mat] }, noon)).toHaveProperty('refused')
+    const unknown = segment({ words: { finish: { ...carpet, says: 'unknown' } } })
+    expect(finishAsBefore(segment(), unknown, noon)).toHaveProperty('refused')
+  })
+
+  test('the surroundings are as before within the hour and the zone', () => {
+    const before = segment({ words: { finish: carpet }, zone: 'hall' })
+    expect(zoneAsBefore(segment(), before, noon)).toEqual({ says: 'hall' })
+    expect(zoneAsBefore(segment(), before, noon + 31 * 60_000)).toHaveProperty('refused')
+    expect(zoneAsBefore(segment(), segment({ words: { finish: carpet } }), noon)).toHaveProperty('refused')
+  })
+
+  test('the rod stands at strike + 0.10 m with its own 10 mm, or at the headroom of the pack', () => {
+    const view = { name: 'v', floors: [], zones: [], places: [], walks: [] }
+    // 1.844 + 0.03 + 0.025 + 0.02 = 1.919; + 0.10 + 0.01 = 2.029, below the 2.03 m of the pack.
+    expect(sweptHeight(view)).toBeCloseTo(2.03, 9)
+    const tall = { ...defaultTeamCard, handler: { ...defaultTeamCard.handler, stature: 2 } }
+    // 2 + 0.03 + 0.025 + 0.02 + 0.10 + 0.01 = 2.185.
+    expect(sweptHeight({ ...view, team: tall })).toBeCloseTo(2.19, 9)
+  })
+})
+
+describe('what is left', () => {
+  test('an empty part asks ten aspects, one led by staff three, and neither shows a verdict word', () => {
+    expect(openAspects(segment())).toHaveLength(10)
+    expect(openAspects(segment({ ledBy: 'staff' }))).toEqual(['overhead', 'edge', 'step'])
+    expect(soFarLine(segment(), undefined, false)).toMatch(/10 answers left$/)
+    expect(soFarLine(segment(), undefined, false)).not.toMatch(/usable|cautions|help|do not use|not known/)
+  })
+
+  test('a surface is answered by all three of its items', () => {
+    const words = { finish: carpet, wetness: { says: 'dry', how: 'swept' as const } }
+    expect(openAspects(segment({ words }))).toContain('surface')
+    expect(openAspects(segment({ words: { ...words, slots: { says: 'none', how: 'swept' } } }))).not.toContain(
+      'surface',
+    )
+  })
+
+  test('a sweep that was too quick, or was inherited, is no answer', () => {
+    const edge = { says: 'none', how: 'swept' as const }
+    expect(openAspects(segment({ words: { edge } }))).not.toContain('edge')
+    expect(openAspects(segment({ words: { edge: { ...edge, tooQuick: true } } }))).toContain('edge')
+    expect(openAspects(segment({ words: { edge: { says: 'none', how: 'inherited' } } }))).toContain('edge')
+  })
+})
+
+describe('a thing and the answer "listed"', () => {
+  function recording() {
+    const log = emptyLog('s', 'phone')
+    const stamp = { device: 'phone', clock: '2026-11-30T12:00:00Z' }
+    appendDrafts(log, addWalk(log, { id: 'w', name: 'walk' }), stamp)
+    appendDrafts(log, addSegment(log, 'w', { id: 'p', name: '', ledBy: 'robot' }), stamp)
+    const now = () => foldSurvey(log).view.walks[0]?.segments[0] as Segment
+    const recorder = () =>
+      ({ segment: now(), answer: (says: string, how: 'swept') => ({ says, how }) }) as unknown as Recorder
+    const add = (id: string, kind: string) => appendDrafts(log, addListed(recorder(), log, id, kind), stamp)
+    const remove = (id: string) => {
+      const feature = now().features.find((one) => one.id === id)
+      if (feature) appendDrafts(log, removeListed(log, now(), feature), stamp)
+    }
+    return { now, add, remove }
+  }
+
+  test('the first door answers the door, and taking the last one away asks again', () => {
+    const { now, add, remove } = recording()
+    add('one', 'hinged-door')
+    expect(now().words.door?.says).toBe('listed')
+    add('two', 'gate')
+    expect(featuresOf(now(), 'door')).toHaveLength(2)
+    remove('one')
+    expect(now().words.door?.says).toBe('listed')
+    remove('two')
+    expect(now().words.door).toBeUndefined()
+    expect(openAspects(now())).toContain('door')
+  })
+
+  test('a grating answers the slots, a wet patch the wetness, a narrowing nothing', () => {
+    const { now, add } = recording()
+    add('one', 'grating')
+    expect(now().words.slots?.says).toBe('listed')
+    add('two', 'wet-patch')
+    expect(now().words.wetness?.says).toBe('wet')
+    const before = Object.keys(now().words).length
+    add('three', 'narrowing')
+    expect(Object.keys(now().words)).toHaveLength(before)
+  })
+})
