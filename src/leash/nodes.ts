@@ -61,6 +61,23 @@ export function greatestMove(from: Node, to: Node, reach: Metres): Metres {
   )
 }
 
+/** The same motion with more nodes, none of whose steps moves a body point more than `most`. */
+export function refine(nodes: readonly Node[], most: Metres, reach: Metres): Node[] {
+  const fine: Node[] = []
+  for (const [k, to] of nodes.entries()) {
+    const from = nodes[k - 1]
+    const pieces = from ? Math.ceil(greatestMove(from, to, reach) / most - 1e-9) : 1
+    for (let i = 1; from && i < pieces; i++) {
+      const node = between(from, to, i / pieces)
+      node.slack = from.slack || to.slack
+      fine.push(node)
+    }
+    // A step without any move is none.
+    if (!from || pieces > 0) fine.push(to)
+  }
+  return fine
+}
+
 /** Nodes as a dense motion. The first node is the start. */
 export function motionOf(nodes: readonly Node[], reach: Metres): Motion {
   const flat: number[] = []
