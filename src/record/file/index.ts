@@ -1,4 +1,4 @@
-export { jsonSchema } from './json-schema.ts'
+export { jsonSchema, schemaOf } from './json-schema.ts'
 export type { Problem } from './problem.ts'
 export { readSurveyFile, type SurveyFile } from './read-survey-file.ts'
 export type { AttributeOf } from './reading-field.ts'

@@ -45,6 +45,11 @@ export function jsonSchema(of: 'survey' | 'team'): JsonSchema {
   }
 }
 
+/** The JSON Schema of any other validator of this program. */
+export function schemaOf(validator: v.GenericSchema): JsonSchema {
+  return toJsonSchema(validator, { errorMode: 'ignore' })
+}
+
 function withoutRequired<T>(schema: T, keys: readonly string[]): T {
   if (Array.isArray(schema)) return schema.map((one) => withoutRequired(one, keys)) as T
   if (typeof schema !== 'object' || schema === null) return schema

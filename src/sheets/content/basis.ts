@@ -1,3 +1,6 @@
+import { packIds } from '../../standards/pack.ts'
+import { pack } from '../../standards/packs.ts'
+import { markWords } from './directions.ts'
 import { furthest } from './gate.ts'
 import { own, ownWhole } from './own.ts'
 import type { Scope } from './scope.ts'
@@ -16,8 +19,8 @@ export function basis(scope: Scope, goodUntil: string | null): Section {
     leashLine(scope),
     `Date of this sheet: ${dayWords(options.on)}.`,
     `Hours: ${hoursWords(view.hours)}.`,
-    `Conditions: ${conditionWords(scope)}.`,
-    `Code pack: ${own(assessment.code)}.`,
+    `Conditions: ${joined(conditionsOf(scope)) || 'as surveyed'}.`,
+    `Code pack: ${own(packName(assessment.code))}.`,
     goodUntil ? `Good until ${dayWords(goodUntil)}.` : 'Good until: not known, no reading is dated.',
     options.number === undefined ? 'Sheet number: none, not issued.' : `Sheet number: ${own(options.number)}.`,
     state ? `${capital(state)}.` : 'State: nobody has signed for this walk.',
@@ -26,21 +29,23 @@ export function basis(scope: Scope, goodUntil: string | null): Section {
   return section('What this sheet holds for', [...invented, list(lines)])
 }
 
-/** The hours are named on their own line. */
-export function conditionWords(scope: Scope): string {
-  const said = scope.result.conditions.filter((condition) => !/\d{2}:\d{2}/.test(condition)).map(conditionPhrase)
-  return said.length > 0 ? joined(said) : 'as surveyed'
+/** What the walk holds under, besides its hours, which have their own line; "dry" alone says too little. */
+export function conditionsOf({ result }: Scope): string[] {
+  return result.conditions
+    .filter((condition) => !/\d{2}:\d{2}|^shown at/.test(condition))
+    .map((condition) => (condition === 'dry' ? 'dry floor only' : own(condition)))
 }
 
-/** "dry" alone says too little. */
-export function conditionPhrase(condition: string): string {
-  return condition === 'dry' ? 'dry floor only' : own(condition)
+/** The published name of the pack judged with; its id where this program has none of that name. */
+function packName(code: string): string {
+  const id = packIds.find((one) => one === code)
+  return id ? pack(id).name : code
 }
 
 function leashLine({ result }: Scope): string {
   if (result.leash === null) return 'Leash: no one length serves this walk.'
   const changes = result.changes.length > 0 ? ', changed on the way' : ''
-  return `Leash: ${Number(result.leash.toFixed(2))} metres${changes}.`
+  return `Leash: ${markWords(result.leash)}${changes}.`
 }
 
 /** The judge's own standing texts, for readers other than the client. */

@@ -1,6 +1,5 @@
-import { basis, conditionWords } from './basis.ts'
+import { basis, conditionsOf } from './basis.ts'
 import { clientRefusal } from './gate.ts'
-import { helpsOf, whoOnly } from './help.ts'
 import { leadOf } from './lead.ts'
 import { overview, shortVersion } from './overview.ts'
 import { own } from './own.ts'
@@ -16,15 +15,15 @@ export function clientOutline(scope: Scope, goodUntil: string | null): Outline |
   if (verdict === 'do-not-use' || verdict === 'not-known') return doNotUse(scope)
   const refusal = clientRefusal(scope)
   if (refusal) return refusal
-  const lead = leadOf(scope, goodUntil)
   const parts = partSections(scope)
+  const lead = leadOf(scope, goodUntil, cautionsIn(parts))
   const contact = contactOf(scope)
   const always = section('Always', [list(alwaysLines(scope))])
   return {
     ...shell(scope, lead.heading),
     blocks: [
       paragraph(lead.rest),
-      { kind: 'verdict', verdict, text: verdictText(scope) },
+      { kind: 'verdict', verdict, text: verdictText(scope, lead.heading) },
       paragraph(`Walk: ${own(scope.result.name)}.`, 'name of the walk'),
     ],
     sections: [
@@ -42,11 +41,8 @@ export function clientOutline(scope: Scope, goodUntil: string | null): Outline |
 
 /** The one form of a walk that nobody may be sent on. */
 function doNotUse(scope: Scope): Outline {
-  const contact = contactOf(scope)
-  const outline = shell(scope, 'Do not use this walk.')
   return {
-    ...outline,
-    blocks: [paragraph(`Ask ${contact}.`, 'contact of the venue')],
+    ...shell(scope, `Do not use this walk. Ask ${contactOf(scope)}.`),
     sections: [basisWithoutWay(scope)],
   }
 }
@@ -82,12 +78,17 @@ function contactOf(scope: Scope): string {
   return contact ? own(contact).replace(/\.$/, '') : 'the person who gave you this sheet'
 }
 
-function verdictText(scope: Scope): string {
-  const who = whoOnly(helpsOf(scope).filter((help) => help.needed))
-  const words = verdictWords[scope.result.verdict]
-  const base = scope.result.verdict === 'with-help' && who ? `${words}: ${who}.` : `${words}.`
-  const conditions = conditionWords(scope)
-  return conditions === 'as surveyed' ? base : `${base} ${capital(conditions)}.`
+/** "Only with help: the porter at the lift. Dry floor only.": as short as the heading had to be. */
+function verdictText(scope: Scope, heading: string): string {
+  const { verdict } = scope.result
+  const who = heading.replace(/^Use this walk only with (?:help)? ?/, '')
+  const base = verdict === 'with-help' && who !== '.' ? `${verdictWords[verdict]}: ${who}` : `${verdictWords[verdict]}.`
+  return [base, ...conditionsOf(scope).map((condition) => `${capital(condition)}.`)].join(' ')
+}
+
+function cautionsIn(parts: readonly Section[]): number {
+  const items = parts.flatMap((part) => part.blocks.flatMap((block) => (block.kind === 'list' ? block.items : [])))
+  return items.filter(({ text }) => /^(Caution: |Stop\. Leash off\.)/.test(text)).length
 }
 
 /** A practitioner's last word is never hidden from the person who walks by it. */

@@ -58,5 +58,5 @@ export function effortWords(length: Metres, step: Metres | undefined, pace: Metr
 
 /** A leash mark: "0.8 metre mark". */
 export function markWords(leash: Metres): string {
-  return `${Number(leash.toFixed(2))} metre mark`
+  return `${leash.toFixed(Math.abs(leash * 10 - Math.round(leash * 10)) < 1e-9 ? 1 : 2)} metre mark`
 }

@@ -1,12 +1,12 @@
 import { kind } from '../../catalogue/kinds.ts'
-import type { Check } from '../../judge/result.ts'
+import type { Check, WalkResult } from '../../judge/result.ts'
 import { instrument } from '../../record/instruments.ts'
 import type { Answer, Reading, Segment } from '../../record/survey.ts'
-import type { PackId } from '../../standards/pack.ts'
+import { packIds } from '../../standards/pack.ts'
 import { pack } from '../../standards/packs.ts'
 import { basis, standingCautions } from './basis.ts'
 import { figure, siValue } from './figures.ts'
-import { featureName, featuresOf, helpsOf } from './help.ts'
+import { featureName, featuresOf, helpsOf, verdictLine } from './help.ts'
 import { own, ownWhole } from './own.ts'
 import type { Scope } from './scope.ts'
 import { type Block, list, type Outline, paragraph, type Section, section } from './tree.ts'
@@ -22,12 +22,12 @@ export function fileOutline(scope: Scope, goodUntil: string | null): Outline {
     draft: false,
     title: `Handler's file: ${own(result.name)}, ${own(view.name)}`,
     heading: `Handler's file: ${own(result.name)}`,
-    blocks: [{ kind: 'verdict', verdict: result.verdict, text: `${verdictWords[result.verdict]}.` }],
+    blocks: [{ kind: 'verdict', verdict: result.verdict, text: verdictLine(scope) }],
     sections: [
       basis(scope, goodUntil),
       section('The walk as a whole', [
         ...checkTable('Checks of the whole walk', result.checks),
-        ...sentenceList(result.why.map(({ kind: why, text }) => `${capital(why.replace('-', ' '))}: ${text}`)),
+        ...sentenceList(ownWhys(scope).map(({ kind: why, text }) => `${capital(why.replace('-', ' '))}: ${text}`)),
         ...answerTable('Answers of the walk', walk.words),
         ...(walk.note ? [paragraph(`Note: ${stopped(ownWhole(walk.note))}`)] : []),
       ]),
@@ -51,6 +51,7 @@ function segmentSection({ segment, result }: Scope['stretches'][number]): Sectio
     ),
     ...(segment.note ? [paragraph(`Note: ${stopped(ownWhole(segment.note))}`)] : []),
     ...sentenceList(result.why.map(({ kind: why, text }) => `${capital(why.replace('-', ' '))}: ${text}`)),
+    ...sentenceList(result.conditions.map((condition) => `Holds: ${condition}`)),
     ...sentenceList(result.cautions.map(({ text }) => `Caution: ${text}`)),
     ...readingTable(segment),
     ...answerTable('Answers of the segment', segment.words),
@@ -60,6 +61,12 @@ function segmentSection({ segment, result }: Scope['stretches'][number]): Sectio
     ...checkTable('Checks', result.checks, features),
     ...retakeTable(result.retakes),
   ])
+}
+
+/** A walk lists its segments' reasons too; they stand with their segments. */
+function ownWhys({ result }: Scope): WalkResult['why'] {
+  const told = new Set(result.segments.flatMap((segment) => segment.why.map(({ text }) => text)))
+  return result.why.filter(({ text }) => !told.has(text))
 }
 
 function sentenceList(texts: readonly string[]): Block[] {
@@ -280,7 +287,9 @@ function cardTable({ team }: Scope): Block {
 }
 
 function packTable({ assessment }: Scope): Block {
-  const { name, limits } = pack(assessment.code as PackId)
+  const id = packIds.find((one) => one === assessment.code)
+  if (!id) return paragraph(`No pack of this program is called ${own(assessment.code)}.`)
+  const { name, limits } = pack(id)
   return {
     kind: 'table',
     caption: own(name),

@@ -1,4 +1,5 @@
 import { kind } from '../../catalogue/kinds.ts'
+import { isGuarded } from '../../judge/checks/edge.ts'
 import { type Check, harms } from '../../judge/result.ts'
 import type { Feature, Segment } from '../../record/survey.ts'
 import { formatForce, formatGradient, formatMm, formatTime } from '../../units/format.ts'
@@ -79,6 +80,8 @@ function fixOf(check: Check, segment: Segment | null): Fix | null {
   const priority = priorityOf(check)
   if (priority === null) return null
   const feature = segment ? featuresOf(segment).find((one) => one.id === check.feature) : undefined
+  // A guarded edge is only walked past by somebody else: nothing is asked of the venue.
+  if (check.id === 'edge' && feature && isGuarded(feature)) return null
   return {
     priority,
     place: feature ? featureName(feature) : own(segment?.name ?? 'whole walk'),

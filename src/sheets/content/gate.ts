@@ -44,11 +44,11 @@ const words: Record<WalkState, string> = {
   surveyed: 'surveyed',
 }
 
-/** "Walked with the client by Ana Ruiz, 3 May 2026": the furthest state reached, or null. */
+/** "walked with the client: Ana Ruiz, 3 May 2026": the furthest state reached, or null. */
 export function furthest(scope: Scope): string | null {
   for (const state of order) {
     const mark = markOf(scope, state)
-    if (mark) return `${words[state]} by ${own(mark.name)}, ${dayWords(mark.date)}`
+    if (mark) return `${words[state]}: ${own(mark.name)}, ${dayWords(mark.date)}`
   }
   return null
 }

@@ -1,6 +1,6 @@
-import { conditionPhrase } from './basis.ts'
+import { conditionsOf } from './basis.ts'
 import { markOf } from './gate.ts'
-import { helpsOf, roleOf, the, whoOnly, whoWhere } from './help.ts'
+import { helpsOf, meetings, whoOnly, whoWhere } from './help.ts'
 import { wordsIn } from './lint.ts'
 import { own } from './own.ts'
 import type { Scope } from './scope.ts'
@@ -17,41 +17,33 @@ export interface Lead {
   rest: string
 }
 
-/** `draft`: room for the mark before the heading is kept. */
-export function leadOf(scope: Scope, goodUntil: string | null): Lead {
+/** Room for the mark of a draft before the heading is kept. `cautions`: how many the parts tell. */
+export function leadOf(scope: Scope, goodUntil: string | null, cautions: number): Lead {
   const until = goodUntil
     ? `Good until ${dayWords(goodUntil)}, ${hoursWords(scope.view.hours)}.`
     : 'End date not known.'
   const walked = markOf(scope, 'walked')
-  const dry = scope.result.conditions.includes('dry') ? ' Dry floor only.' : ''
+  const dry = conditionsOf(scope).includes('dry floor only') ? ' Dry floor only.' : ''
   const mark = scope.options.draft ? 'DRAFT: '.length : 0
   const named = walked ? own(walked.name, 24) : 'an instructor'
   const rest = `You have ${walked ? '' : 'not yet '}walked it with ${named}. ${until}${dry}`
-  const heading = headings(scope).find(
+  const heading = headings(scope, cautions).find(
     (text) => wordsIn(text) <= mostWords && mark + text.length + 1 + rest.length <= firstCharacters,
   )
   return { heading: heading ?? 'Use this walk only with help.', rest }
 }
 
 /** From the fullest sentence to the shortest. */
-function headings(scope: Scope): string[] {
-  const { verdict, cautions } = scope.result
+function headings(scope: Scope, cautions: number): string[] {
+  const { verdict } = scope.result
   if (verdict === 'usable') return ['Use this walk as this sheet says.']
-  if (verdict === 'with-cautions')
-    return [`Use this walk with ${count(cautions.length, 'caution')}, as this sheet says.`]
-  const helps = helpsOf(scope).filter((help) => help.needed)
-  const alarm = roleOf(scope.walk.alarm)
-  if (helps.length === 0)
-    return [alarm ? `Use this walk only with ${the(alarm)} on duty.` : 'Use this walk only with help.']
+  if (verdict === 'with-cautions') return [`Use this walk with ${count(cautions, 'caution')}, as this sheet says.`]
+  const helps = meetings(helpsOf(scope).filter((help) => help.needed))
+  if (helps.length === 0) return []
   const places = new Set(helps.map(({ place }) => place)).size
   return [
     `Use this walk only with ${whoWhere(helps)}.`,
     `Use this walk only with ${whoOnly(helps)} at ${count(places, 'place')}.`,
     `Use this walk only with help at ${count(places, 'place')}.`,
   ]
-}
-
-/** "Dry floor only" and the like, one sentence each. */
-export function conditionSentences(scope: Scope): string[] {
-  return scope.result.conditions.filter((one) => !/\d{2}:\d{2}/.test(one)).map((one) => `${conditionPhrase(one)}.`)
 }

@@ -1,15 +1,16 @@
 import { markWords, metresWords } from './directions.ts'
-import { helpsOf, whoWhere } from './help.ts'
+import { featureName, helpsOf, whoWhere } from './help.ts'
 import type { Lead } from './lead.ts'
 import { own } from './own.ts'
 import type { Scope } from './scope.ts'
 import { severe, stretchesOf } from './stretches.ts'
 import { type Line, line, list, type Section, section } from './tree.ts'
-import { capital, count, stopped } from './words.ts'
+import { capital, count, distinct, joined, sentences, stopped } from './words.ts'
 
 /** Parts, metres, minutes, who leads, turns above 45 degrees. `parts`: the sections that follow. */
 export function overview(scope: Scope, parts: readonly Section[]): Section {
   const lines: Line[] = [line(`${capital(count(parts.length, 'part'))}${wayWords(scope)}.`), ...turnLines(parts)]
+  lines.push(line(levelWords(scope)))
   const rest = scope.walk.words.rest?.says
   if (rest)
     lines.push(
@@ -19,13 +20,22 @@ export function overview(scope: Scope, parts: readonly Section[]): Section {
       ),
     )
   const dead = scope.walk.words.deadEnd?.says
-  if (dead)
-    lines.push(line(`At the dead end: ${stopped(own(dead, 200).replaceAll('; ', '. '))}`, 'dead end of the walk'))
+  if (dead) lines.push(line(`At the dead end: ${sentences(own(dead, 400)).join(' ')}`, 'dead end of the walk'))
   for (const helper of whoWhere(helpsOf(scope).filter((help) => help.needed))
     .split(', and ')
     .filter(Boolean))
     lines.push(line(`With you: ${helper}.`))
   return section('Overview', [list(lines)])
+}
+
+const levels: readonly string[] = ['single-step', 'kerb', 'stairs', 'escalator', 'moving-walk', 'ramp', 'lift']
+
+/** Steps, slopes and lifts, by name, in walking order. */
+function levelWords({ walk }: Scope): string {
+  const names = walk.segments.flatMap((segment) =>
+    segment.features.filter((feature) => levels.includes(feature.kind)).map(featureName),
+  )
+  return names.length > 0 ? `Level changes: ${joined(distinct(names))}.` : 'No step, slope or lift.'
 }
 
 /** ", 28 metres, about 1 minute"; nothing while a length is missing. */

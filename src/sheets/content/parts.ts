@@ -62,7 +62,7 @@ function facing(scope: Scope, before: Stretch | undefined): Line[] {
   }
   if (before.ledBy !== 'robot' && before.role) return [line(`Facing: ${the(before.role)} sets it.`)]
   const turn = before.segments.at(-1)?.turn
-  if (!turn) return [line("Facing: as before, 12 o'clock.")]
+  if (!turn) return [line("Facing: straight on, 12 o'clock.")]
   const angle = turnAngle(turn)
   return [
     angle === null
@@ -120,9 +120,9 @@ function cautionLine(caution: ToldCaution): Line {
   return line(caution.stop ? caution.text : `Caution: ${caution.text}`, caution.from)
 }
 
-/** The judge's words on a caution, one line. */
+/** The judge's words on a caution, one line. "Here" says nothing: the part says where. */
 function spoken(caution: Caution): string {
-  return sentences(own(caution.text, 400)).join(' ')
+  return sentences(own(caution.text, 400).replace(/ here\b/g, '')).join(' ')
 }
 
 function walkLine(scope: Scope, stretch: Stretch, pace: number | null): Line {

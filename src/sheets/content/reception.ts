@@ -1,15 +1,15 @@
 import { basis, standingCautions } from './basis.ts'
-import { helpsOf, type PlaceHelp, roleOf, the } from './help.ts'
+import { helpsOf, meetings, type PlaceHelp, roleOf, the, verdictLine } from './help.ts'
 import { own, ownWhole } from './own.ts'
 import type { Scope } from './scope.ts'
 import { list, type Outline, paragraph, type Section, section } from './tree.ts'
-import { capital, hoursWords, sentences, stopped, verdictWords } from './words.ts'
+import { capital, hoursWords, sentences, stopped } from './words.ts'
 
 /** Reception's card for the day: who is where, what they do, what they say. */
 export function receptionOutline(scope: Scope, goodUntil: string | null): Outline {
   const { result, view } = scope
   const off = result.verdict === 'do-not-use' || result.verdict === 'not-known'
-  const helps = helpsOf(scope)
+  const helps = meetings(helpsOf(scope))
   return {
     kind: 'outline',
     lang: 'en',
@@ -18,7 +18,7 @@ export function receptionOutline(scope: Scope, goodUntil: string | null): Outlin
     title: `Day card: ${own(result.name)}, ${own(view.name)}`,
     heading: off ? `Nobody goes on this walk: ${own(result.name)}` : `Day card: ${own(result.name)}`,
     blocks: [
-      { kind: 'verdict', verdict: result.verdict, text: `${verdictWords[result.verdict]}.` },
+      { kind: 'verdict', verdict: result.verdict, text: verdictLine(scope) },
       paragraph(
         off ? `Send nobody on this walk with the robot. Ask ${contactOf(scope)}.` : `Hours: ${hoursWords(view.hours)}.`,
       ),

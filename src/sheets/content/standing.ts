@@ -2,6 +2,7 @@ import { markWords } from './directions.ts'
 import { helpsOf, roleOf, the } from './help.ts'
 import { own } from './own.ts'
 import type { Scope } from './scope.ts'
+import { lengthOf } from './stretches.ts'
 import { gap, type Line, line, list, type Section, section } from './tree.ts'
 import { capital, sentences, stopped } from './words.ts'
 
@@ -34,6 +35,7 @@ export function troubleSection(scope: Scope): Section {
     list([
       line('If the robot stops and stays: stand, open your hand, call help.'),
       line('If its battery runs low: stop, stand, call help.'),
+      ...turnBackLines(scope),
       ...alarmLines(scope),
       help,
       signalLine(scope),
@@ -42,14 +44,31 @@ export function troubleSection(scope: Scope): Section {
   ])
 }
 
+/** Where the battery is only just enough: the last place from which it also reaches back. */
+function turnBackLines(scope: Scope): Line[] {
+  const battery = scope.result.checks.find((check) => check.id === 'battery')
+  if (!battery || battery.caution === null || battery.capacity === null) return []
+  const there = battery.capacity / reserve / 2
+  let seconds = 0
+  for (const { segment } of scope.stretches) {
+    seconds += (lengthOf(segment) ?? longest) / (scope.result.pace ?? scope.team.handler.pace)
+    if (seconds > there) return [line(`Battery: just enough. Turn back by "${own(segment.name)}" if it runs low.`)]
+  }
+  return [line('Battery: just enough for this walk, not for the way back.')]
+}
+
+/** The judge's reserve on the battery's time, and the length of a segment that nobody measured. */
+const reserve = 1.3
+const longest = 25
+
 /** "If the alarm sounds: let go, hand on the wall, stand, call out, [role] comes to [place]." */
 export function alarmLines({ walk }: Pick<Scope, 'walk'>): Line[] {
   const role = roleOf(walk.alarm)
-  const place = typeof walk.alarm?.place === 'string' ? own(walk.alarm.place) : 'you'
+  const place = typeof walk.alarm?.place === 'string' ? the(own(walk.alarm.place)) : 'you'
   return [
     line('If the alarm sounds: let go, hand on the wall, stand, call out.'),
     role
-      ? line(`${capital(the(role))} comes to ${the(place)}.`, 'alarm role of the walk')
+      ? line(`${capital(the(role))} comes to ${place}.`, 'alarm role of the walk')
       : gap('Who comes', 'alarm role of the walk'),
   ]
 }

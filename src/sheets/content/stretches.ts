@@ -1,7 +1,7 @@
 import type { Caution, SegmentResult } from '../../judge/result.ts'
 import type { Feature, LedBy, Segment } from '../../record/survey.ts'
 import type { Metres } from '../../units/quantity.ts'
-import { featuresOf, roleOf } from './help.ts'
+import { featuresOf, roleOf, the } from './help.ts'
 import type { Scope } from './scope.ts'
 
 /** Segments that are one piece of the walk to its reader: one led by the robot, or all in a row led by the same person. */
@@ -88,5 +88,5 @@ function stopText(feature: Feature | undefined, segment: Segment): string {
 
 /** The one caution of such a place. */
 export function stopLine(role: string | null): string {
-  return `Stop. Leash off. Wait for ${role ?? '[role not named]'}.`
+  return `Stop. Leash off. Wait for ${role === null ? '[role not named]' : the(role)}.`
 }

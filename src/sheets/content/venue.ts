@@ -1,10 +1,10 @@
 import { basis, standingCautions } from './basis.ts'
 import { fixesOf } from './fixes.ts'
-import { helpsOf, roleOf } from './help.ts'
+import { helpsOf, meetings, roleOf, verdictLine } from './help.ts'
 import { own, ownWhole } from './own.ts'
 import type { Scope } from './scope.ts'
 import { list, type Outline, paragraph, type Section, section } from './tree.ts'
-import { capital, count, dayWords, distinct, stopped, verdictWords } from './words.ts'
+import { capital, count, dayWords, distinct, stopped } from './words.ts'
 
 /** The venue manager's sheet: what is good, what is a hazard today, what to fix first and by how much. */
 export function venueOutline(scope: Scope, goodUntil: string | null): Outline {
@@ -17,7 +17,7 @@ export function venueOutline(scope: Scope, goodUntil: string | null): Outline {
     title: `For the venue: ${own(scope.result.name)}, ${own(scope.view.name)}`,
     heading: `For the venue: ${own(scope.result.name)}`,
     blocks: [
-      { kind: 'verdict', verdict: scope.result.verdict, text: `${verdictWords[scope.result.verdict]}.` },
+      { kind: 'verdict', verdict: scope.result.verdict, text: verdictLine(scope) },
       paragraph(summary(scope, fixes.length)),
     ],
     sections: [
@@ -98,7 +98,7 @@ function goodPoints({ stretches }: Scope): string[] {
 }
 
 function hazards(scope: Scope): string[] {
-  const lines = fixesOf(scope).map(({ place, check }) => `${capital(place)}: ${stopped(ownWhole(check.sentence))}`)
+  const lines = fixesOf(scope).map(({ check }) => stopped(ownWhole(check.sentence)))
   for (const { segment, result } of scope.stretches)
     for (const caution of result.cautions)
       if (!result.checks.some((check) => check.feature === caution.feature && check.state !== 'passes'))
@@ -116,7 +116,7 @@ function notKnown(scope: Scope): Section[] {
 function onTheDay(scope: Scope): string[] {
   return [
     'Keep the walk clear as it was surveyed.',
-    ...helpsOf(scope).flatMap(({ help, place }) => {
+    ...meetings(helpsOf(scope)).flatMap(({ help, place }) => {
       const role = roleOf(help)
       return role && help.act ? [`${capital(role)} at ${place}: ${stopped(ownWhole(help.act))}`] : []
     }),

@@ -53,13 +53,25 @@ export function stopped(text: string): string {
   return /[.!?…]\u2069?$/.test(text) ? text : `${text}.`
 }
 
+/** More words than this in one breath are cut at their middle "and". */
+const longBreath = 12
+
 /** Words with semicolons become sentences: "offers an arm; a second person carries it" are two. */
 export function sentences(text: string): string[] {
   return text
-    .split(/;\s+/)
-    .map((piece) => piece.trim())
+    .split(/;\s+|(?<=[.!?])\s+/)
+    .flatMap((piece) => cutAtAnd(piece.trim()))
     .filter((piece) => piece !== '')
     .map((piece) => stopped(capital(piece)))
+}
+
+function cutAtAnd(piece: string): string[] {
+  const words = piece.split(' ')
+  if (words.length <= longBreath) return [piece]
+  const middle = words.length / 2
+  const ands = words.flatMap((word, i) => (word === 'and' && i > 2 && i < words.length - 2 ? [i] : []))
+  const at = ands.sort((one, other) => Math.abs(one - middle) - Math.abs(other - middle))[0]
+  return at === undefined ? [piece] : [words.slice(0, at).join(' ').replace(/,$/, ''), words.slice(at + 1).join(' ')]
 }
 
 /** No two equal, first come first kept. */
