@@ -1,6 +1,7 @@
 import type { Metres } from '../units/quantity.ts'
 import type { PairCheck } from './checks/pair-check.ts'
 import type { ClosedWindow } from './result.ts'
+import type { Judged } from './segment.ts'
 import type { Grid, Pair } from './window.ts'
 
 /** What would open the window: makes the checks anew with a venue changed by that much. */
@@ -14,7 +15,7 @@ const step: Metres = 0.01
  * The two checks that close a window, and the least change that opens it: seconds of a door, else millimetres of a
  * pinch (both its widths), found by trying. Null where no single change does.
  */
-export function closedWindow(grid: Grid, checks: readonly PairCheck[], widened: Widened): ClosedWindow | null {
+export function closedWindow({ grid, pairs: checks }: Judged, widened: Widened): ClosedWindow | null {
   const closers = closersOf(grid, checks)
   const [first, second] = closers
   if (!first) return null

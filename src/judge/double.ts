@@ -1,9 +1,10 @@
 import type { Walk } from '../record/survey.ts'
-import type { Verdict } from './result.ts'
+import type { PairCheck } from './checks/pair-check.ts'
 import type { RoomSolver } from './rooms.ts'
-import { decideAt, type Judged, judgeSite, ownPair } from './segment.ts'
+import { type Judged, judgeSite, ownPair, verdictAt } from './segment.ts'
 import type { Setting } from './setting.ts'
 import { siteOf } from './site.ts'
+import { verdictRank } from './worst.ts'
 
 /** A segment judged wet and dry where wet applies, and what it holds under. */
 export interface Standing {
@@ -14,16 +15,20 @@ export interface Standing {
 
 export const dryFloorOnly = 'dry floor only'
 
-const stands = new Set<Verdict>(['usable', 'with-cautions', 'with-help'])
-
 /** The wet judgement where it stands; else the dry one where that stands, with its condition; else the wet one. */
-export function judgeSegment(setting: Setting, walk: Walk, index: number, rooms: RoomSolver): Standing {
-  const wet = judgeSite(siteOf(setting, walk, index, true), rooms)
+export function judgeSegment(
+  setting: Setting,
+  walk: Walk,
+  index: number,
+  rooms: RoomSolver,
+  nominal?: readonly PairCheck[],
+): Standing {
+  const wet = judgeSite(siteOf(setting, walk, index, true), rooms, nominal)
   if (!wet.site.wetApplies || holdsUp(wet)) return { judged: wet, dryOnly: false }
-  const dry = judgeSite(siteOf(setting, walk, index, false), rooms)
+  const dry = judgeSite(siteOf(setting, walk, index, false), rooms, nominal)
   return holdsUp(dry) ? { judged: dry, dryOnly: true } : { judged: wet, dryOnly: false }
 }
 
 function holdsUp(judged: Judged): boolean {
-  return stands.has(decideAt(judged, ownPair(judged)).decided.verdict)
+  return verdictRank(verdictAt(judged, ownPair(judged))) <= verdictRank('with-help')
 }

@@ -1,39 +1,38 @@
 import type { Metres } from '../units/quantity.ts'
-import { high } from './finding.ts'
+import { type Finding, high } from './finding.ts'
 import type { LadderCell } from './result.ts'
-import { decideAt, type Judged, ownPair } from './segment.ts'
-import { choose } from './window.ts'
-
-/** A judged segment as if one length alone were on offer. */
-export function restrict(judged: Judged, leash: Metres): Judged {
-  const grid = { pairs: judged.grid.pairs.filter((one) => one.leash === leash) }
-  const choice = choose(grid, judged.floor)
-  return {
-    ...judged,
-    grid,
-    choice,
-    closed: judged.site.led && choice === null && grid.pairs.every((one) => one.failing > 0),
-  }
-}
+import { type Judged, lengthsHere, ownPair, restrict, verdictAt } from './segment.ts'
 
 /** The cell of one length: the best verdict it allows and the worst check at it. */
 export function ladderCell(judged: Judged, leash: Metres): LadderCell {
-  if (!judged.site.led)
-    return { leash, verdict: decideAt(judged, null).decided.verdict, room: null, check: null, pace: null }
-  const alone = restrict(judged, leash)
+  const { site, floor, pairs } = judged
+  if (!site.led) return { leash, verdict: floor, room: null, check: null, pace: null }
   // A length that is not on offer here (a crowd) holds nothing.
-  if (alone.grid.pairs.length === 0) return { leash, verdict: 'do-not-use', room: null, check: 'crowd', pace: null }
-  const at = ownPair(alone)
-  const { findings, decided, governing } = decideAt(alone, at)
-  const tightest = findings
-    .filter((one) => one.ratio && one.state !== 'helped')
-    .reduce<(typeof findings)[number] | null>((a, b) => (a && high(a.ratio) >= high(b.ratio) ? a : b), null)
-  const worst = tightest?.ratio?.[1] ?? null
+  if (!lengthsHere(site).includes(leash))
+    return { leash, verdict: 'do-not-use', room: null, check: 'crowd', pace: null }
+  const alone = restrict(judged, leash)
+  const pair = ownPair(alone)
+  let check: string | null = null
+  let worst = Number.NEGATIVE_INFINITY
+  const take = (id: string, end: number) => {
+    if (end <= worst) return
+    worst = end
+    check = id
+  }
+  for (const one of judged.plain) if (counts(one)) take(one.id, high(one.ratio))
+  for (const one of pair ? pairs : []) {
+    const cell = one.cell(leash, pair?.pace ?? 0)
+    if (cell.state !== 'helped') take(one.id, high(cell.ratio()))
+  }
   return {
     leash,
-    verdict: decided.verdict,
-    room: worst === null ? null : 1 - worst,
-    check: tightest?.id ?? governing?.id ?? null,
+    verdict: verdictAt(alone, pair),
+    room: Number.isFinite(worst) ? 1 - worst : null,
+    check,
     pace: alone.choice?.pace ?? null,
   }
+}
+
+function counts(one: Finding): boolean {
+  return one.ratio !== null && one.state !== 'helped'
 }

@@ -1,6 +1,5 @@
 import type { Metres } from '../units/quantity.ts'
-import { restrict } from './ladder.ts'
-import { decideAt, type Judged, ownPair } from './segment.ts'
+import { type Judged, ownPair, restrict, verdictAt } from './segment.ts'
 import { holds, lexicographic } from './window.ts'
 import { verdictRank } from './worst.ts'
 
@@ -85,10 +84,10 @@ function bestOf(segments: readonly Judged[], lengths: readonly Metres[]): Metres
     let rank = 0
     for (const one of segments) {
       const alone = restrict(one, leash)
-      const at = ownPair(alone)
-      if (!at) continue
-      rank = Math.max(rank, verdictRank(decideAt(alone, at).decided.verdict))
-      worst.push(...(alone.grid.pairs.find((pair) => pair.pace === at.pace)?.worst ?? []))
+      const pair = ownPair(alone)
+      if (!pair) continue
+      rank = Math.max(rank, verdictRank(verdictAt(alone, pair)))
+      worst.push(...pair.worst())
     }
     return { leash, rank, worst: worst.sort((a, b) => b - a) }
   })

@@ -2,17 +2,20 @@ import { kind } from '../catalogue/kinds.ts'
 import { type InstrumentId, instrument, instrumentIds } from '../record/instruments.ts'
 import { uncertainty } from '../record/interval.ts'
 import type { Reading, Walk } from '../record/survey.ts'
+import { limit } from '../standards/packs.ts'
 import { aspectHarm } from './answered.ts'
+import { type At, decideAt } from './decide-at.ts'
 import { judgeSegment, type Standing } from './double.ts'
 import { type Harm, harms, type Retake } from './result.ts'
 import type { RoomSolver } from './rooms.ts'
-import { decideAt, ownPair } from './segment.ts'
+import { ownPair } from './segment.ts'
 import type { Setting } from './setting.ts'
 import { featuresOf, nameOf } from './site.ts'
 
 /** A reading that a segment's judgement looks at. */
 interface Used {
   reading: Reading
+  quantity: string
   what: string
   harm: Harm
   /** Tools that read this quantity. */
@@ -24,7 +27,9 @@ interface Used {
 /**
  * Readings to take again. For each one that the segment uses, the segment alone is judged afresh with that reading
  * known exactly at each end of its own uncertainty: only this segment's verdict can depend on it here, and every scene
- * that the reading does not enter is already solved. Estimated, told and disputed ones are named whatever they decide.
+ * that the reading does not enter is already solved. A reading whose checks all pass and do not govern is skipped: a
+ * narrower reading leaves each of them no less room (see `cannotMatter`). Estimated, told and disputed ones are named
+ * whatever they decide.
  */
 export function retakesOf(
   setting: Setting,
@@ -33,10 +38,11 @@ export function retakesOf(
   standing: Standing,
   rooms: RoomSolver,
 ): Retake[] {
-  const now = outcome(standing)
+  const at = decideAt(standing.judged, ownPair(standing.judged))
+  const now = outcome(standing, at)
   const found: Retake[] = []
-  for (const one of usedBy(standing, index, walk)) {
-    const why = reasons(one, now, setting, walk, index, rooms)
+  for (const one of usedBy(standing, index, walk, at)) {
+    const why = [...known(one), ...(cannotMatter(one, standing, at, setting) ? [] : changes(one, now))]
     if (why.length === 0) continue
     found.push({
       reading: one.reading.id,
@@ -46,31 +52,74 @@ export function retakesOf(
     })
   }
   return found.sort((a, b) => harms.indexOf(a.harm ?? 'comfort') - harms.indexOf(b.harm ?? 'comfort'))
+
+  function changes({ reading }: Used, nominal: Outcome): Set<string> {
+    const found = new Set<string>()
+    const u = spread(reading, setting)
+    // On a slope a narrower gradient changes the separations: nothing carries over.
+    const carried = standing.judged.site.slope.from.length > 0 ? undefined : standing.judged.pairs
+    for (const end of u === 0 ? [] : [reading.value - u, reading.value + u]) {
+      const pins = new Map([...(setting.pins ?? []), [reading.id, end]])
+      const then = outcome(judgeSegment({ ...setting, pins }, walk, index, rooms, carried))
+      if (then.verdict !== nominal.verdict)
+        found.add(`${then.verdict.replaceAll('-', ' ')} at one end of what it may be`)
+      else if (then.governing !== nominal.governing) found.add('another check governs at one end of what it may be')
+      else if (then.leash !== nominal.leash) found.add('another leash length at one end of what it may be')
+    }
+    return found
+  }
 }
 
-function reasons(
-  { reading, disputed }: Used,
-  now: Outcome,
-  setting: Setting,
-  walk: Walk,
-  index: number,
-  rooms: RoomSolver,
-): string[] {
+/** What is known of a reading whatever it decides. */
+function known({ reading, disputed }: Used): string[] {
   const why: string[] = []
   if (disputed) why.push('readings differ')
-  if (instrument(reading.instrument)?.hearsay) why.push(reading.instrument === 'told' ? 'told' : 'estimated')
-  if (reading.instrument === 'paces' || reading.instrument === 'plan') why.push('estimated')
-  const u = reading.safeSide ? 0 : uncertainty(reading, setting.view.instruments)
-  if (u === 0) return why
-  const changes = new Set<string>()
-  for (const end of [reading.value - u, reading.value + u]) {
-    const pins = new Map([...(setting.pins ?? []), [reading.id, end]])
-    const then = outcome(judgeSegment({ ...setting, pins }, walk, index, rooms))
-    if (then.verdict !== now.verdict) changes.add(`${then.verdict.replaceAll('-', ' ')} at one end of what it may be`)
-    else if (then.governing !== now.governing) changes.add('another check governs at one end of what it may be')
-    else if (then.leash !== now.leash) changes.add('another leash length at one end of what it may be')
-  }
-  return [...why, ...changes]
+  if (reading.instrument === 'told') why.push('told')
+  if (['by-eye', 'paces', 'plan'].includes(reading.instrument)) why.push('estimated')
+  return why
+}
+
+function spread(reading: Reading, setting: Setting): number {
+  return reading.safeSide ? 0 : uncertainty(reading, setting.view.instruments)
+}
+
+/** Checks that go by the unsafe end of their readings alone: no limit of a code pack, compared at the reading itself. */
+const byTheirEnds = new Set([
+  'straight-width',
+  'turn',
+  'stop',
+  'stop-at-edge',
+  'door-time',
+  'lift-time',
+  'lift-fit',
+  'slip',
+  'traction',
+  'noise',
+])
+
+/**
+ * True where the reading enters only checks that pass, at every length and pace, and none of which governs: then every
+ * r_high can only fall and no state can change. Overhead counts too while the whole reading clears the pack's headroom.
+ */
+function cannotMatter({ reading, quantity }: Used, { judged }: Standing, at: At, setting: Setting): boolean {
+  const entered = at.findings.filter(
+    (one) => one.readings.includes(reading.id) || (quantity === 'length' && one.id === 'turn'),
+  )
+  const clearOfPack = (id: string) =>
+    id === 'overhead' && reading.value - spread(reading, setting) >= limit(setting.pack, 'headroom').value
+  return entered.every(
+    (one) =>
+      one.state === 'passes' &&
+      one !== at.governing &&
+      !one.differs &&
+      (byTheirEnds.has(one.id) || clearOfPack(one.id)) &&
+      judged.pairs.every(
+        (pair) =>
+          pair.id !== one.id ||
+          pair.feature !== one.feature ||
+          judged.grid.pairs.every(({ leash, pace }) => pair.cell(leash, pace).state === 'passes'),
+      ),
+  )
 }
 
 interface Outcome {
@@ -80,8 +129,8 @@ interface Outcome {
 }
 
 /** By itself, at its own best length and pace. */
-function outcome({ judged, dryOnly }: Standing): Outcome {
-  const { decided, governing } = decideAt(judged, ownPair(judged))
+function outcome({ judged, dryOnly }: Standing, at: At = decideAt(judged, ownPair(judged))): Outcome {
+  const { decided, governing } = at
   return {
     verdict: dryOnly ? `${decided.verdict}, dry floor only` : decided.verdict,
     governing: governing ? `${governing.id} ${governing.feature}` : null,
@@ -89,32 +138,38 @@ function outcome({ judged, dryOnly }: Standing): Outcome {
   }
 }
 
-function usedBy({ judged }: Standing, index: number, walk: Walk): Used[] {
+function usedBy({ judged }: Standing, index: number, walk: Walk, at: At): Used[] {
   const { site } = judged
   const found: Used[] = []
-  const at = decideAt(judged, ownPair(judged))
   const differing = new Set(at.findings.filter((one) => one.differs).flatMap((one) => [...one.readings]))
-  const add = (readings: readonly Reading[] | undefined, what: string, harm: Harm, tools: readonly string[]) => {
+  const add = (
+    readings: readonly Reading[] | undefined,
+    quantity: string,
+    what: string,
+    harm: Harm,
+    tools: readonly string[],
+  ) => {
     const settled = new Set((readings ?? []).flatMap((one) => one.settles?.readings ?? []))
     for (const reading of readings ?? [])
-      if (!settled.has(reading.id)) found.push({ reading, what, harm, tools, disputed: differing.has(reading.id) })
+      if (!settled.has(reading.id))
+        found.push({ reading, quantity, what, harm, tools, disputed: differing.has(reading.id) })
   }
   for (const [quantity, readings] of Object.entries(site.segment.readings)) {
     const harm = quantity === 'pendulum' ? 'fall' : (aspectHarm[quantity as 'width'] ?? 'comfort')
-    add(readings, `${site.segment.name}, ${quantity}`, harm, quantity === 'overhead' ? ['rod', 'laser'] : [])
+    add(readings, quantity, `${site.segment.name}, ${quantity}`, harm, quantity === 'overhead' ? ['rod', 'laser'] : [])
   }
   for (const feature of featuresOf(site)) {
     const row = kind(feature.kind)
     for (const [quantity, readings] of Object.entries(feature.readings)) {
       const attribute = row?.attributes.find((one) => one.id === quantity)
       const tools = attribute?.type === 'quantity' ? attribute.instruments : []
-      add(readings, `${nameOf(feature)}, ${attribute?.name ?? quantity}`, row?.harm ?? 'comfort', tools)
+      add(readings, quantity, `${nameOf(feature)}, ${attribute?.name ?? quantity}`, row?.harm ?? 'comfort', tools)
     }
   }
   if (site.segment.turn && site.segment.turn.readings.widthAfter === undefined)
-    add(walk.segments[index + 1]?.readings.width, `${walk.segments[index + 1]?.name}, width`, 'trap', [])
+    add(walk.segments[index + 1]?.readings.width, 'width', `${walk.segments[index + 1]?.name}, width`, 'trap', [])
   for (const one of site.zone?.observations ?? [])
-    add(one.readings.noise, `${site.zone?.name}, noise`, 'comfort', ['sound-meter'])
+    add(one.readings.noise, 'noise', `${site.zone?.name}, noise`, 'comfort', ['sound-meter'])
   return found
 }
 

@@ -1,20 +1,22 @@
 import type { Walk } from '../record/survey.ts'
 import { battery } from './checks/battery.ts'
 import { emergency } from './checks/emergency.ts'
+import { decideAt } from './decide-at.ts'
 import { dryFloorOnly, judgeSegment, type Standing } from './double.ts'
 import { type Finding, finding, toCheck } from './finding.ts'
 import type { Gap } from './gap.ts'
-import { ladderCell, restrict } from './ladder.ts'
+import { ladderCell } from './ladder.ts'
 import { lengthsOf, type Stretch } from './one-length.ts'
 import { overridden } from './overrides.ts'
 import { harms, type JudgeProgress, type SegmentResult, type WalkResult } from './result.ts'
 import { retakesOf } from './retakes.ts'
 import type { RoomSolver } from './rooms.ts'
-import { decideAt, type Judged, ownPair, segmentResult } from './segment.ts'
+import { type AtPair, type Judged, ownPair, restrict } from './segment.ts'
+import { segmentResult } from './segment-result.ts'
 import type { Hours, Setting } from './setting.ts'
 import { governing } from './verdict.ts'
 import { whysOf } from './why.ts'
-import { gridOf, holds } from './window.ts'
+import { holds, pairOf } from './window.ts'
 import { verdictRank, worstVerdict } from './worst.ts'
 
 /** Judges one walk, segment by segment; the judging of each is announced before it is done. */
@@ -62,13 +64,17 @@ function leashAt(stretches: readonly Stretch[] | null, index: number): number | 
 }
 
 /** At the walk's length and pace where the segment holds there, else at its own, and it says so. */
-function shownAt(judged: Judged, leash: number | null, pace: number | null, changeable: boolean) {
+function shownAt(
+  judged: Judged,
+  leash: number | null,
+  pace: number | null,
+  changeable: boolean,
+): { judged: Judged; at: AtPair; says: string[] } {
   const own = ownPair(judged)
   if (!judged.site.led) return { judged, at: null, says: [] }
   if (leash === null || pace === null) return { judged, at: own, says: [] }
-  const pair = gridOf(judged.pairs, [leash], [pace]).pairs[0]
   const offered = judged.grid.pairs.some((one) => one.leash === leash)
-  if (pair && offered && holds(pair)) return { judged, at: { leash, pace }, says: [] }
+  if (offered && holds(pairOf(judged.pairs, leash, pace))) return { judged, at: { leash, pace }, says: [] }
   // A leash that cannot be changed is the walk's on every part.
   if (!changeable && judged.choice !== null && offered) {
     const alone = restrict(judged, leash)
@@ -160,7 +166,7 @@ function worstOf(
 }
 
 /** The pair a result was made at, read from its checks. */
-function pairShown(segment: SegmentResult, judged: Judged): { leash: number; pace: number } | null {
+function pairShown(segment: SegmentResult, judged: Judged): AtPair {
   return segment.checks.find((one) => one.at !== null)?.at ?? ownPair(judged)
 }
 

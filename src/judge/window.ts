@@ -1,6 +1,6 @@
 import type { Metres, MetresPerSecond } from '../units/quantity.ts'
 import type { PairCheck } from './checks/pair-check.ts'
-import { high, passesTo } from './finding.ts'
+import { high } from './finding.ts'
 import { creeping } from './team.ts'
 
 /** How a length at a pace stands by the checks that depend on them. */
@@ -10,17 +10,19 @@ export interface Pair {
   /** 0 clear, 1 with cautions, 2 with help; 3 not known (no check fails), 4 fails. */
   rank: 0 | 1 | 2 | 3 | 4
   failing: number
-  /** r_high of its checks, worst first. */
-  worst: number[]
   /** Stop, door and lift times at 0.85 or less; a helped one counts. */
   timely: boolean
   /** Rooms clear of the caution band and without a pause. */
   roomy: boolean
+  /** r_high of its checks, worst first; asked for only where lengths are ranked. */
+  worst(): number[]
 }
 
-/** The grid of one segment. */
+/** Every length on offer at every pace, fastest first. Shared by segments that nothing but their reaction and slope tells apart. */
 export interface Grid {
-  pairs: Pair[]
+  pairs: readonly Pair[]
+  /** What was chosen of it already, by floor and length. */
+  chosen: Map<string, Choice | null>
 }
 
 /** A window: what is kept at the pace chosen. */
@@ -31,7 +33,8 @@ export interface Choice {
   recommended: Metres
 }
 
-/** Every length on offer at every pace, fastest first. */
+export const noGrid: Grid = { pairs: [], chosen: new Map() }
+
 export function gridOf(
   checks: readonly PairCheck[],
   lengths: readonly Metres[],
@@ -39,30 +42,36 @@ export function gridOf(
 ): Grid {
   const pairs: Pair[] = []
   for (const pace of paces) for (const leash of lengths) pairs.push(pairOf(checks, leash, pace))
-  return { pairs }
+  return { pairs, chosen: new Map() }
 }
 
-function pairOf(checks: readonly PairCheck[], leash: Metres, pace: MetresPerSecond): Pair {
+/** One pair judged, on a grid or off it. */
+export function pairOf(checks: readonly PairCheck[], leash: Metres, pace: MetresPerSecond): Pair {
   let rank: Pair['rank'] = pace <= creeping + 1e-9 ? 1 : 0
   let failing = 0
   let timely = true
   let roomy = true
-  const worst: number[] = []
   for (const check of checks) {
-    const { state, ratio, pauses, told } = check.cell(leash, pace)
-    const at = stateRank(state)
+    const cell = check.cell(leash, pace)
+    const at = cell.told ? Math.max(3, stateRank(cell.state)) : stateRank(cell.state)
     if (at === 4) failing++
-    rank = Math.max(rank, told && at < 3 ? 3 : at) as Pair['rank']
-    if (pauses > 0 && rank < 1) rank = 1
-    if (ratio) worst.push(high(ratio))
-    if (check.timed && state !== 'helped' && high(ratio) > passesTo + 1e-9) timely = false
-    if (!check.timed && state !== 'passes' && state !== 'helped') roomy = false
+    if (at > rank) rank = at as Pair['rank']
+    if (cell.state === 'passes' || cell.state === 'helped') continue
+    if (check.timed) timely = false
+    else roomy = false
   }
-  worst.sort((a, b) => b - a)
+  const worst = () => {
+    const all: number[] = []
+    for (const check of checks) {
+      const ratio = check.cell(leash, pace).ratio()
+      if (ratio) all.push(high(ratio))
+    }
+    return all.sort((a, b) => b - a)
+  }
   return { leash, pace, rank, failing, worst, timely, roomy }
 }
 
-function stateRank(state: string): Pair['rank'] {
+function stateRank(state: string): number {
   if (state === 'fails' || state === 'stop-item') return 4
   if (state === 'unsure' || state === 'needs-help') return 3
   return state === 'helped' ? 2 : state === 'tight' ? 1 : 0
@@ -77,8 +86,18 @@ export function holds({ rank }: Pair): boolean {
  * The window of the pairs that hold: of those with the best verdict for the segment (no better than `floor`, what its
  * other checks leave: 0 usable, 1 with cautions, 2 with help) the highest pace at which some length is timely, else the
  * highest pace; there the least, the greatest, and the shortest that is timely and roomy, else the best worst-first.
+ * @param only the one length on offer, where only one is.
  */
-export function choose({ pairs }: Grid, floor: number): Choice | null {
+export function choose(grid: Grid, floor: number, only?: Metres): Choice | null {
+  const key = `${floor} ${only ?? ''}`
+  const before = grid.chosen.get(key)
+  if (before !== undefined) return before
+  const choice = chosenOf(only === undefined ? grid.pairs : grid.pairs.filter((one) => one.leash === only), floor)
+  grid.chosen.set(key, choice)
+  return choice
+}
+
+function chosenOf(pairs: readonly Pair[], floor: number): Choice | null {
   const holding = pairs.filter(holds)
   const best = Math.min(...holding.map((one) => Math.max(floor, one.rank)))
   const kept = holding.filter((one) => Math.max(floor, one.rank) === best)
@@ -97,7 +116,7 @@ export function choose({ pairs }: Grid, floor: number): Choice | null {
 
 /** Lexicographic by r_high, worst first; equal ones by the shorter leash. */
 function worstFirst(a: Pair, b: Pair): number {
-  return lexicographic(a.worst, b.worst) || a.leash - b.leash
+  return lexicographic(a.worst(), b.worst()) || a.leash - b.leash
 }
 
 /** Negative where `a` is the better of two lists sorted worst first. */
@@ -111,8 +130,6 @@ export function lexicographic(a: readonly number[], b: readonly number[]): numbe
 }
 
 /** Where no pair holds: the one with the fewest failing checks, then the least r_high; at last the faster and shorter. */
-export function leastBad({ pairs }: Grid): Pair | null {
-  return (
-    [...pairs].sort((a, b) => a.failing - b.failing || a.rank - b.rank || lexicographic(a.worst, b.worst))[0] ?? null
-  )
+export function leastBad(pairs: readonly Pair[]): Pair | null {
+  return [...pairs].sort((a, b) => a.failing - b.failing || lexicographic(a.worst(), b.worst()))[0] ?? null
 }

@@ -91,6 +91,8 @@ function span(one: Reading, { unsafe, changed, pins }: IntervalOptions): Span {
 /** One place: every reading there, whoever took it. */
 function joined(place: readonly Reading[], options: IntervalOptions): Interval {
   const spans = place.map((one) => ({ one, at: span(one, options) }))
+  // Whether people differ is a matter of record: a pinned reading is compared as it was taken.
+  const taken = options.pins ? place.map((one) => ({ one, at: span(one, { ...options, pins: undefined }) })) : spans
   const { unsafe } = options
   const order = (s: Span) =>
     unsafe === 'low' ? s.low : unsafe === 'high' ? -s.high : -Math.max(Math.abs(s.low), Math.abs(s.high))
@@ -102,7 +104,7 @@ function joined(place: readonly Reading[], options: IntervalOptions): Interval {
     if (!known || order(next.at) < order(known.at)) speakers.set(name, next)
   }
   const worst = spans.reduce((a, b) => (order(b.at) < order(a.at) ? b : a))
-  const apart = spans.some((a) => spans.some((b) => disagree(a.one, a.at, b.one, b.at)))
+  const apart = taken.some((a) => taken.some((b) => disagree(a.one, a.at, b.one, b.at)))
   // "Take the safe side" of the unsafe-most reading settles the place there.
   const settled = worst.one.safeSide === true
   const heard = settled ? [worst] : apart || unsafe === 'both' ? spans : [...speakers.values()]

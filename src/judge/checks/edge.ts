@@ -29,7 +29,7 @@ export function edge(site: Site): Finding[] {
     if (!isEdge(feature)) return []
     const distance = read(site.setting, feature, 'distance', 'low')
     if (!distance) return []
-    return [judged(site, feature, distance, edgeKind(site, feature))]
+    return [judged(site, feature, distance)]
   })
 }
 
@@ -38,18 +38,20 @@ export function isEdge(feature: Feature): boolean {
   return ['drop-off', 'water-edge', 'platform-edge', 'traffic-edge', 'kerb-edge'].includes(feature.kind)
 }
 
-function edgeKind({ setting }: Site, feature: Feature): Kind {
+/** What the edge is by its height, and the reading that says so. */
+function edgeKind({ setting }: Site, feature: Feature): { kind: Kind; by: Interval | null } {
   if (feature.kind === 'traffic-edge') {
     const kerb = read(setting, feature, 'kerb', 'low')
-    return kerb && kerb.value >= holdsWheels - epsilon ? 'kerb' : 'traffic'
+    return { kind: kerb && kerb.value >= holdsWheels - epsilon ? 'kerb' : 'traffic', by: kerb }
   }
-  if (feature.kind !== 'kerb-edge') return 'drop'
+  if (feature.kind !== 'kerb-edge') return { kind: 'drop', by: null }
   const height = read(setting, feature, 'height', 'high')
   // A kerb of unknown height is as deep as it likes.
-  return height && height.value <= kerbHeight + epsilon ? 'kerb' : 'drop'
+  return { kind: height && height.value <= kerbHeight + epsilon ? 'kerb' : 'drop', by: height }
 }
 
-function judged(site: Site, feature: Feature, distance: Interval, kind: Kind): Finding {
+function judged(site: Site, feature: Feature, distance: Interval): Finding {
+  const { kind, by } = edgeKind(site, feature)
   const led = helpLedOtherwise(site, feature)
   const guarded = isGuarded(feature)
   const raw = guarded ? (led ? 'needs-help' : 'passes') : stateOf(kind, distance)
@@ -71,7 +73,7 @@ function judged(site: Site, feature: Feature, distance: Interval, kind: Kind): F
     demand: stopUnder,
     capacity: distance.low,
     caution: raw === 'tight' ? cautionOf(kind) : null,
-    from: [distance],
+    from: [distance, by],
     strict: true,
     told,
     ...(help ? { help } : {}),

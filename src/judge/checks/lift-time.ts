@@ -50,7 +50,7 @@ export function liftTime(site: Site): PairCheck[] {
         timed: true,
         cell: (leash, pace) => {
           const { state, ratio, told } = whole(leash, pace)
-          return { state, ratio, pauses: 0, told }
+          return { state, ratio: () => ratio, told }
         },
         finding: whole,
       }

@@ -1,5 +1,5 @@
 import type { Metres, MetresPerSecond } from '../../units/quantity.ts'
-import type { Draft, Finding, Ratio } from '../finding.ts'
+import type { Finding, Ratio } from '../finding.ts'
 
 /** A check that depends on leash length or pace. Cells are cheap and made for the whole grid; findings for what is shown. */
 export interface PairCheck {
@@ -15,15 +15,16 @@ export interface PairCheck {
 
 export interface Cell {
   state: Finding['state']
-  ratio: Ratio | null
-  pauses: number
+  /** Asked for only where lengths are ranked. */
+  ratio(): Ratio | null
   /** Told readings that cannot lift a verdict. */
   told: boolean
 }
 
 /** What a check says of one pair, before the sentence. */
-export type Reckoned = Pick<Draft, 'raw' | 'ratio'> & {
-  demand: number | null
-  capacity: number | null
-  pauses?: number
+export interface Reckoned {
+  raw: Exclude<Finding['state'], 'helped'>
+  ratio: Ratio
+  demand: number
+  capacity: number
 }

@@ -36,7 +36,7 @@ export function stopAtEdge(site: Site): PairCheck[] {
         timed: false,
         cell: (leash: number, pace: number) => {
           const { raw, ratio } = reckon(leash, pace)
-          return { state: raw, ratio, pauses: 0, told: false }
+          return { state: raw, ratio: () => ratio, told: false }
         },
         finding: (leash: number, pace: number) => {
           const { raw, ratio, demand, capacity } = reckon(leash, pace)

@@ -22,11 +22,7 @@ export function stop(site: Site): PairCheck {
   const { team } = setting
   const { robot, handler, leash: limits } = team.card
   const { a, d } = team.bodies
-  const known = new Map<number, Reckoned>()
   const reckon = (leash: number, pace: number): Reckoned => {
-    const key = leash * 1000 + pace
-    const before = known.get(key)
-    if (before) return before
     const walked = stopDistance(pace, site.reaction, handler.deceleration, slope.down)
     const demand = walked + limits.plannedSlack
     const separation = leastSeparation(team, leash, slope.steepest) ?? 0
@@ -35,9 +31,7 @@ export function stop(site: Site): PairCheck {
       : 0
     const capacity = separation - (a / 2 - d) - team.front + runOut
     const ratio = ratioOf({ low: demand, high: demand }, { low: capacity, high: capacity })
-    const reckoned = { raw: stateOf(ratio), ratio, demand, capacity }
-    known.set(key, reckoned)
-    return reckoned
+    return { raw: stateOf(ratio), ratio, demand, capacity }
   }
   return {
     id: 'stop',
@@ -45,7 +39,7 @@ export function stop(site: Site): PairCheck {
     timed: true,
     cell: (leash, pace) => {
       const { raw, ratio } = reckon(leash, pace)
-      return { state: raw as 'passes', ratio: ratio ?? null, pauses: 0, told: false }
+      return { state: raw, ratio: () => ratio, told: false }
     },
     finding: (leash, pace) => {
       const { raw, ratio, demand, capacity } = reckon(leash, pace)
@@ -53,13 +47,13 @@ export function stop(site: Site): PairCheck {
         id: 'stop',
         feature: segment.id,
         subject: `Stopping on ${segment.name}`,
-        detail: () => `${metresNeeded(demand ?? 0)} for ${metresThere(capacity ?? 0)} behind a robot that stops dead`,
+        detail: () => `${metresNeeded(demand)} for ${metresThere(capacity)} behind a robot that stops dead`,
         harm: 'fall',
         source: 'common practice',
         raw,
         demand,
         capacity,
-        ratio: ratio ?? null,
+        ratio,
         caution: raw === 'tight' ? 'Slow. Be ready to stop.' : pace <= creeping + 1e-9 ? 'Very slow here.' : null,
         at: { leash, pace },
         from: slope.from,

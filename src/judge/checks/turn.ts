@@ -1,5 +1,5 @@
 import { kind } from '../../catalogue/kinds.ts'
-import { type Lacking, type Pinch, type PinchSite, pinchesOf } from '../../plan/pinches.ts'
+import type { Lacking, Pinch, PinchSite } from '../../plan/pinches.ts'
 import { epsilon, type Finding, finding, ratioOf, roomState } from '../finding.ts'
 import type { Room, RoomSolver } from '../rooms.ts'
 import { read } from '../setting.ts'
@@ -34,12 +34,31 @@ export function isPinch(one: Pinch | Lacking): one is Pinch {
  * of every reading and over the separations of the length. In the walk's own direction. A slack pause counts only where
  * the handler is shown to stand, and never on a ramp, near a stair, edge or lift, or in a two-way crowd.
  */
-export function turns(site: Site, rooms: RoomSolver, wider?: { feature: string; by: number }): PairCheck[] {
-  if (!site.led) return []
-  const pinches = pinchesOf(pinchSite(site)).filter(isPinch)
+export function turns(
+  site: Site,
+  pinches: readonly Pinch[],
+  rooms: RoomSolver,
+  { wider, nominal }: Variant = {},
+): PairCheck[] {
   return pinches.map((pinch) =>
-    pairOf(site, wider && pinch.feature.id === wider.feature ? widened(pinch, wider.by) : pinch, rooms),
+    pairOf(
+      site,
+      wider && pinch.feature.id === wider.feature ? widened(pinch, wider.by) : pinch,
+      rooms,
+      nominal?.find((one) => one.id === 'turn' && one.feature === pinch.feature.id),
+    ),
   )
+}
+
+/** How the judgement of a pinch departs from the plain one. */
+export interface Variant {
+  /** One pinch made wider. */
+  wider?: { feature: string; by: number }
+  /**
+   * The checks with every reading at its full uncertainty, where this one narrows one of them: what passed there passes
+   * here, since its certified room can only grow.
+   */
+  nominal?: readonly PairCheck[]
 }
 
 /** The same pinch with every width that much wider. */
@@ -51,7 +70,7 @@ function widened(pinch: Pinch, by: number): Pinch {
   return { ...pinch, widths: Object.fromEntries(widths) }
 }
 
-function pairOf(site: Site, pinch: Pinch, rooms: RoomSolver): PairCheck {
+function pairOf(site: Site, pinch: Pinch, rooms: RoomSolver, nominal: PairCheck | undefined): PairCheck {
   const { setting } = site
   const { team } = setting
   const need = team.card.leash.clearancePinch
@@ -120,8 +139,10 @@ function pairOf(site: Site, pinch: Pinch, rooms: RoomSolver): PairCheck {
     cell: (leash) => {
       const before = cells.get(leash)
       if (before) return before
-      const { state, ratio: r, pauses, told } = whole(leash, 0)
-      const cell = { state, ratio: r, pauses, told }
+      const passed = nominal?.cell(leash, 0)
+      if (passed?.state === 'passes') return { ...passed, ratio: () => whole(leash, 0).ratio }
+      const { state, ratio: end, told } = whole(leash, 0)
+      const cell = { state, ratio: () => end, told }
       cells.set(leash, cell)
       return cell
     },
