@@ -26,7 +26,7 @@ declare module 'pdfkit' {
       lang: string
       displayTitle: true
       info: { Title: string; Creator: string; Producer: string; CreationDate: Date }
-      font: Uint8Array
+      font: null
       size: [number, number]
       margins: { top: number; bottom: number; left: number; right: number }
       bufferPages: true

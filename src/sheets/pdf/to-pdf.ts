@@ -28,7 +28,8 @@ export async function toPdf(outline: Outline, { font, boldFont, made }: PdfMater
     lang: outline.lang,
     displayTitle: true,
     info: { Title: outline.title, Creator: 'Tautline', Producer: 'Tautline', CreationDate: made },
-    font,
+    // None to begin with: a face given here would be read anew at each change to it.
+    font: null,
     size: [paper.width, paper.height],
     margins: { ...margins },
     bufferPages: true,
