@@ -1,6 +1,6 @@
 import { mkdirSync, readFileSync, renameSync, writeFileSync } from 'node:fs'
 import { dirname } from 'node:path'
-import { type Machine, type OutFile, oneLine } from './ended.ts'
+import { type Done, type Machine, type OutFile, oneLine } from './ended.ts'
 import { run } from './run.ts'
 
 const badInput = 2
