@@ -49,7 +49,7 @@ export function* judgeSurvey(survey: Survey, options: JudgeOptions): Generator<J
 }
 
 /** What a judgement is made with, from a survey and options. */
-export function settingOf(survey: Survey, options: Omit<JudgeOptions, 'walk'>): Setting {
+export function settingOf(survey: Survey, options: Omit<JudgeOptions, 'walk' | 'planner'>): Setting {
   const { view } = survey
   const on = view.demo === true && view.asOn ? view.asOn : options.on
   if (on === undefined)
@@ -62,7 +62,6 @@ export function settingOf(survey: Survey, options: Omit<JudgeOptions, 'walk'>): 
     pack: pack(options.code ?? view.code),
     on,
     hours,
-    planner: options.planner,
   }
 }
 

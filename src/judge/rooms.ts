@@ -1,6 +1,6 @@
 import type { Scene, SceneForm } from '../geometry/scene.ts'
 import type { Bodies, ClearanceAnswer, Motion, Planner } from '../leash/answer.ts'
-import type { Dimension, Pinch } from '../plan/pinches.ts'
+import type { Dimension, OwnScene, Pinch } from '../plan/pinches.ts'
 import { buildScene, reverseForm } from '../plan/scenes.ts'
 import type { Metres } from '../units/quantity.ts'
 import type { Grid } from './window.ts'
@@ -42,19 +42,23 @@ export interface Ask {
 export function roomSolver(planner: Planner, bodies: Bodies): RoomSolver {
   const known = new Map<string, Room>()
 
-  function solve(form: SceneForm | ((separation: Metres) => Scene), separation: Metres, ask: Ask): Room {
-    if (typeof form === 'function') return roomIn(planner(form(separation), bodies, separation, options(ask)), ask)
-    const asked = ask.back ? reverseForm(form) : form
-    const key = `${Object.values(asked).join(' ')} ${separation} ${ask.slack} ${ask.pausesAt}`
+  function solve(form: SceneForm | OwnScene, separation: Metres, ask: Ask): Room {
+    const asked = form.kind !== 'own' && ask.back ? reverseForm(form) : form
+    const key = `${asked.kind === 'own' ? asked.key : Object.values(asked).join(' ')} ${separation} ${ask.slack} ${ask.pausesAt}`
     const before = known.get(key)
     if (before) return before
-    const built = buildScene(asked, bodies, separation)
+    const scene = asked.kind === 'own' ? asked.draw(separation) : drawn(asked, separation)
     // A pinch that cannot be drawn is one that nobody can pass, and nobody knows.
-    const room = built.ok
-      ? roomIn(planner(built.scene, bodies, separation, options(ask)), ask)
+    const room = scene
+      ? roomIn(planner(scene, bodies, separation, options(ask)), ask)
       : { low: null, high: freeBound, pauses: 0, nearest: null }
     known.set(key, room)
     return room
+  }
+
+  function drawn(form: SceneForm, separation: Metres): Scene | null {
+    const built = buildScene(form, bodies, separation)
+    return built.ok ? built.scene : null
   }
 
   return {

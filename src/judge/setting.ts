@@ -1,4 +1,3 @@
-import type { Planner } from '../leash/answer.ts'
 import { type Interval, interval, type Unsafe } from '../record/interval.ts'
 import type { Conflict, Reading, SurveyView } from '../record/survey.ts'
 import type { CodePack } from '../standards/pack.ts'
@@ -20,7 +19,6 @@ export interface Setting {
   on: string
   /** Null: every hour that somebody observed. */
   hours: Hours | null
-  planner: Planner
   /** Readings taken as known at one value: for retakes. */
   pins?: ReadonlyMap<string, number>
 }

@@ -30,7 +30,14 @@ export interface Pinch {
   /** Room taken off the certified end: an angle by 3-4-5 or plan is taken as square. */
   offLow: Metres
   /** The named form, or a scene of its own for a separation, both in metres and radians. */
-  build: (dims: Readonly<Record<string, number>>) => SceneForm | ((separation: Metres) => Scene)
+  build: (dims: Readonly<Record<string, number>>) => SceneForm | OwnScene
+}
+
+/** A scene of no named form: `key` tells it from every other. */
+export interface OwnScene {
+  kind: 'own'
+  key: string
+  draw(separation: Metres): Scene
 }
 
 /** A pinch that cannot be judged yet, and what it lacks, in words. */
@@ -321,10 +328,11 @@ export function liftCar(site: PinchSite, feature: Feature): Pinch | null {
     free: {},
     from,
     offLow: 0,
-    build:
-      ({ p = 0, e = 0, w = 0 }) =>
-      (separation) =>
-        liftScene({ w, p: Math.min(p, w), e }, team, separation),
+    build: ({ p = 0, e = 0, w = 0 }) => ({
+      kind: 'own',
+      key: `lift ${w} ${p} ${e}`,
+      draw: (separation) => liftScene({ w, p: Math.min(p, w), e }, team, separation),
+    }),
   }
 }
 
