@@ -76,6 +76,23 @@ function contentStreams(file: Buffer): string[] {
   return streams
 }
 
+/** Every mark is closed on its page, and nothing is drawn outside one. Returns how much is drawn. */
+function expectMarked(stream: string): number {
+  let painted = 0
+  let depth = 0
+  for (const line of stream.split('\n')) {
+    if (/ B(DC|MC)$/.test(line)) depth++
+    else if (/^EMC$/.test(line)) depth--
+    else if (/(^|[\] ])(TJ|Tj|f|f\*|S|s|B)$/.test(line)) {
+      painted++
+      expect(depth, line).toBeGreaterThan(0)
+    }
+    expect(depth).toBeGreaterThanOrEqual(0)
+  }
+  expect(depth).toBe(0)
+  return painted
+}
+
 describe.each([
   ['client', clientSheet],
   ['venue, draft', venueSheet],
@@ -124,21 +141,8 @@ describe.each([
   })
 
   it('draws nothing that is neither tagged nor an artifact (ISO 14289-1, 7.1)', () => {
-    let painted = 0
-    for (const stream of contentStreams(readFileSync(path))) {
-      let depth = 0
-      for (const line of stream.split('\n')) {
-        if (/ B(DC|MC)$/.test(line)) depth++
-        else if (/^EMC$/.test(line)) depth--
-        else if (/(^|[\] ])(TJ|Tj|f|f\*|S|s|B)$/.test(line)) {
-          painted++
-          expect(depth, line).toBeGreaterThan(0)
-        }
-        expect(depth).toBeGreaterThanOrEqual(0)
-      }
-      expect(depth).toBe(0)
-    }
-    expect(painted).toBeGreaterThan(50)
+    const painted = contentStreams(readFileSync(path)).map(expectMarked)
+    expect(painted.reduce((sum, one) => sum + one, 0)).toBeGreaterThan(50)
   })
 
   it('embeds its faces, as far as used', () => {
@@ -198,6 +202,43 @@ describe('lists, tables and pictures', () => {
     const raw = readFileSync(await write(clientSheet), 'latin1')
     expect(raw).toContain('/Alt (Diamond, the shape of with help.)')
     expect(structure(await write(clientSheet)).filter(({ type }) => type === 'Figure')).toHaveLength(1)
+  })
+
+  it('a table too wide for an upright page turns the pages on their side, and stays a table of columns', async () => {
+    const head = ['What', 'As written', 'SI value', 'Instrument', 'Person', 'Time', 'Remarks']
+    const row = [
+      'overhead',
+      '>2.20 metres',
+      '2.2 metres',
+      'rod-with-mark',
+      'Annaliese Moorland',
+      '2026-11-30T08:44:00Z',
+      'Whole width',
+    ]
+    const sheet = structuredClone(clientSheet)
+    sheet.sections = [
+      { heading: 'Readings', blocks: [{ kind: 'table', caption: 'Readings', head, rows: [row] }], sections: [] },
+    ]
+    const path = await write(sheet)
+    expect(run('pdfinfo', [path])).toMatch(/^Page size: +841\.89 x 595\.28 pts/m)
+    expect(run('pdfinfo', [await write(venueSheet)])).toMatch(/^Page size: +595\.28 x 841\.89 pts/m)
+    expect(run('pdftotext', ['-layout', path, '-'])).toMatch(/What +As written +SI value +Instrument/)
+  })
+
+  it('a row, a cell or a caption at the foot of a page keeps its marks in order', async () => {
+    // Rows of every kind in turn, so that page ends fall within each of them.
+    const long = `${'word '.repeat(700)}end`
+    const rows = Array.from({ length: 30 }, (_, i) => [`Row ${i}`, i % 3 === 0 ? long : 'short'])
+    for (const shift of [0, 3, 7, 11]) {
+      const sheet = structuredClone(clientSheet)
+      const lines = Array.from({ length: shift }, (_, i) => ({ text: `Line ${i}` }))
+      const table = { kind: 'table', caption: 'Long and short', head: ['Where', 'What'], rows } as const
+      sheet.sections = [{ heading: 'Readings', blocks: [{ kind: 'list', items: lines }, table, table], sections: [] }]
+      const path = await write(sheet)
+      expect(structure(path).filter(({ type }) => type === 'TR')).toHaveLength(62)
+      for (const stream of contentStreams(readFileSync(path))) expectMarked(stream)
+      run('pdftotext', [path, '-'])
+    }
   })
 
   it('a table whose words are wider than its columns is set cell under cell, and stays a table', async () => {

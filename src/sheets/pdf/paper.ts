@@ -1,10 +1,19 @@
 import type PDFDocument from 'pdfkit'
 import type { Outline } from '../content/tree.ts'
 
-/** A4 in points, and the measure in which the words stand. */
-export const paper = { width: 595.28, height: 841.89 }
+/** A4 in points: upright, or on its side for a table of many columns. */
+export const upright: [number, number] = [595.28, 841.89]
+export const onItsSide: [number, number] = [841.89, 595.28]
 export const margins = { top: 72, bottom: 64, left: 56, right: 56 }
-export const measure = paper.width - margins.left - margins.right
+
+/** Width and height in which the words of a page stand. */
+export function measure(doc: PDFDocument): number {
+  return doc.page.width - margins.left - margins.right
+}
+export function bodyHeight(doc: PDFDocument): number {
+  return doc.page.height - margins.top - margins.bottom
+}
+
 export const ink = '#1B1F3B'
 const soft = '#565A78'
 const tape = '#F2C230'
@@ -12,9 +21,14 @@ const tape = '#F2C230'
 /** Faces by the names under which they are registered. */
 export const face = { text: 'text', bold: 'bold' } as const
 
-/** True where `height` more points would run into the foot of the page. */
-export function pageIsFull(doc: PDFDocument, height: number): boolean {
-  return doc.y + height > paper.height - margins.bottom
+/**
+ * A new page where `height` more points would run into the foot of this one. Never within a marked piece of content: its
+ * end would stand on another page than its beginning.
+ */
+export function makeRoom(doc: PDFDocument, height: number): boolean {
+  if (doc.y + height <= doc.page.height - margins.bottom || doc.y <= margins.top) return false
+  doc.continueOnNewPage()
+  return true
 }
 
 /**
@@ -36,9 +50,13 @@ export function furnish(doc: PDFDocument, outline: Outline): void {
     const number = `Page ${i + 1} of ${count}`
     doc.font(face.text).fontSize(12)
     const room = doc.widthOfString(number)
-    doc.text(number, paper.width - margins.right - room, paper.height - 44, { lineBreak: false })
+    doc.text(number, doc.page.width - margins.right - room, doc.page.height - 44, { lineBreak: false })
     doc.fillColor(soft).fontSize(10)
-    doc.text(outline.title, margins.left, paper.height - 43, { width: measure - room - 16, height: 11, ellipsis: true })
+    doc.text(outline.title, margins.left, doc.page.height - 43, {
+      width: measure(doc) - room - 16,
+      height: 11,
+      ellipsis: true,
+    })
     doc.endMarkedContent()
   }
 }
@@ -46,9 +64,9 @@ export function furnish(doc: PDFDocument, outline: Outline): void {
 /** The yellow tape with ink ticks: a tick each 5 mm, a longer one each 10 mm. It carries no meaning. */
 function drawTape(doc: PDFDocument): void {
   const millimetre = 72 / 25.4
-  doc.rect(margins.left, 26, measure, 10).fill(tape)
+  doc.rect(margins.left, 26, measure(doc), 10).fill(tape)
   doc.strokeColor(ink).lineWidth(0.6)
-  for (let at = 0; at * 5 * millimetre <= measure; at++) {
+  for (let at = 0; at * 5 * millimetre <= measure(doc); at++) {
     const x = margins.left + at * 5 * millimetre
     doc.moveTo(x, 36).lineTo(x, at % 2 === 0 ? 29 : 32)
   }

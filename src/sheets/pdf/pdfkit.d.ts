@@ -27,8 +27,7 @@ declare module 'pdfkit' {
       displayTitle: true
       info: { Title: string; Creator: string; Producer: string; CreationDate: Date }
       font: null
-      size: [number, number]
-      margins: { top: number; bottom: number; left: number; right: number }
+      autoFirstPage: false
       bufferPages: true
     })
     x: number
@@ -63,7 +62,12 @@ declare module 'pdfkit' {
     addStructure(element: StructureElement): this
     markContent(tag: 'Artifact', options: { type: 'Pagination' | 'Layout' }): this
     endMarkedContent(): this
-    addPage(): this
+    addPage(options: {
+      size: [number, number]
+      margins: { top: number; bottom: number; left: number; right: number }
+    }): this
+    /** Another of the same kind. */
+    continueOnNewPage(): this
     bufferedPageRange(): { start: number; count: number }
     switchToPage(index: number): void
     end(): void

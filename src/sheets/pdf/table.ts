@@ -2,13 +2,12 @@ import type PDFDocument from 'pdfkit'
 import type { StructureElement } from 'pdfkit'
 import { held } from '../../units/held.ts'
 import type { Block } from '../content/tree.ts'
-import { face, ink, margins, measure, pageIsFull, paper } from './paper.ts'
+import { bodyHeight, face, ink, makeRoom, margins, measure, upright } from './paper.ts'
 
 type Table = Extract<Block, { kind: 'table' }>
 
 const size = 12
 const gap = 8
-const body = paper.height - margins.top - margins.bottom
 const leading = { lineGap: 3 }
 
 /**
@@ -18,8 +17,9 @@ const leading = { lineGap: 3 }
 export function drawTable(doc: PDFDocument, table: Table, parent: StructureElement): void {
   const root = doc.struct('Table')
   parent.add(root)
+  makeRoom(doc, 6 * size)
   root.add(doc.struct('Caption', () => caption(doc, table.caption)))
-  const widths = columnWidths(doc, table)
+  const widths = columnWidths(doc, table, measure(doc))
   const draw = (cells: readonly string[], scope: Scope) => {
     const row = doc.struct('TR')
     root.add(row)
@@ -27,15 +27,12 @@ export function drawTable(doc: PDFDocument, table: Table, parent: StructureEleme
       const element = scope === 'Row' && i > 0 ? doc.struct('TD') : doc.struct('TH', { scope })
       row.add(element.add(words))
     }
-    const height = widths ? rowHeight(doc, cells, widths, scope) : body
-    if (!widths || height > body / 2) {
+    const height = widths ? rowHeight(doc, cells, widths, scope) : 0
+    if (!widths || height > bodyHeight(doc) / 2) {
       stackCells(doc, cells, scope === 'Row' ? table.head : [], add)
       return
     }
-    if (pageIsFull(doc, height)) {
-      doc.addPage()
-      if (scope === 'Row') repeatHead(doc, table.head, widths)
-    }
+    if (makeRoom(doc, height) && scope === 'Row') repeatHead(doc, table.head, widths)
     drawRow(doc, cells, widths, scope, height, add)
     doc.markContent('Artifact', { type: 'Layout' })
     drawRule(doc, scope === 'Column' ? 1 : 0.4)
@@ -61,8 +58,7 @@ type AddCell = (column: number, words: () => void) => void
 
 function caption(doc: PDFDocument, text: string): void {
   doc.font(face.bold).fontSize(size)
-  if (pageIsFull(doc, 6 * size)) doc.addPage()
-  doc.text(held(text), margins.left, doc.y, { width: measure, ...leading })
+  doc.text(held(text), margins.left, doc.y, { width: measure(doc), ...leading })
   doc.y += gap / 2
 }
 
@@ -95,18 +91,18 @@ function drawRule(doc: PDFDocument, width: number): void {
     .strokeColor(ink)
     .lineWidth(width)
     .moveTo(margins.left, y)
-    .lineTo(margins.left + measure, y)
+    .lineTo(margins.left + measure(doc), y)
     .stroke()
 }
 
 /** Cell under cell over the whole measure; `head` stands before each but the first. */
 function stackCells(doc: PDFDocument, cells: readonly string[], head: readonly string[], add: AddCell): void {
   for (const [i, text] of cells.entries()) {
+    makeRoom(doc, 2 * size)
     add(i, () => {
       strength(doc, 'Row', i)
-      if (pageIsFull(doc, 2 * size)) doc.addPage()
       const label = i > 0 && head[i] ? `${head[i]}: ` : ''
-      doc.text(held(label + text), margins.left, doc.y, { width: measure, ...leading })
+      doc.text(held(label + text), margins.left, doc.y, { width: measure(doc), ...leading })
     })
   }
 }
@@ -123,8 +119,13 @@ function rowHeight(doc: PDFDocument, cells: readonly string[], widths: readonly 
   return Math.max(...heights) + 6
 }
 
+/** Whether a table's longest words stand side by side on an upright page. */
+export function fits(doc: PDFDocument, table: Table): boolean {
+  return columnWidths(doc, table, upright[0] - margins.left - margins.right) !== null
+}
+
 /** Room for the longest word of each column, and the rest by how much each has to say; null where the words do not fit. */
-function columnWidths(doc: PDFDocument, { head, rows }: Table): number[] | null {
+function columnWidths(doc: PDFDocument, { head, rows }: Table, room: number): number[] | null {
   doc.font(face.bold).fontSize(size)
   const columns = head.map((text, i) => [text, ...rows.map((cells) => cells[i] ?? '')])
   const least = columns.map((texts) =>
@@ -134,7 +135,7 @@ function columnWidths(doc: PDFDocument, { head, rows }: Table): number[] | null 
         .map((word) => doc.widthOfString(word) + gap + 2),
     ),
   )
-  const spare = measure - least.reduce((sum, width) => sum + width, 0)
+  const spare = room - least.reduce((sum, width) => sum + width, 0)
   if (spare < 0) return null
   const weights = columns.map((texts) => Math.sqrt(Math.max(...texts.map((text) => text.length), 1)))
   const all = weights.reduce((sum, weight) => sum + weight, 0)

@@ -3,8 +3,8 @@ import { toBytes } from 'pdfkit/output'
 import { held } from '../../units/held.ts'
 import type { Block, Outline, Refusal, Section } from '../content/tree.ts'
 import { refuseUnshown } from './glyphs.ts'
-import { face, furnish, ink, margins, measure, pageIsFull, paper } from './paper.ts'
-import { drawTable } from './table.ts'
+import { face, furnish, ink, makeRoom, margins, measure, onItsSide, upright } from './paper.ts'
+import { drawTable, fits } from './table.ts'
 import { drawShape, shapeWords } from './verdict-shape.ts'
 
 export interface PdfMaterial {
@@ -30,8 +30,7 @@ export async function toPdf(outline: Outline, { font, boldFont, made }: PdfMater
     info: { Title: outline.title, Creator: 'Tautline', Producer: 'Tautline', CreationDate: made },
     // None to begin with: a face given here would be read anew at each change to it.
     font: null,
-    size: [paper.width, paper.height],
-    margins: { ...margins },
+    autoFirstPage: false,
     bufferPages: true,
   })
   escapeTitle(doc, outline.title)
@@ -40,6 +39,10 @@ export async function toPdf(outline: Outline, { font, boldFont, made }: PdfMater
   const refusal = refuseUnshown(outline, (point) => faces.every((one) => one.hasGlyphForCodePoint(point)))
   if (refusal) return refusal
   const bytes = toBytes(doc)
+  doc.addPage({
+    size: tablesOf(outline).every((table) => fits(doc, table)) ? upright : onItsSide,
+    margins: { ...margins },
+  })
   const root = doc.struct('Document')
   doc.addStructure(root)
   const writer = { doc, root, size: outline.reader === 'client' || outline.reader === 'reception' ? 14 : 12 }
@@ -51,6 +54,12 @@ export async function toPdf(outline: Outline, { font, boldFont, made }: PdfMater
   furnish(doc, outline)
   doc.end()
   return bytes
+}
+
+/** Every table of the sheet: the widest decides which way its pages lie. */
+function tablesOf(outline: Outline): Extract<Block, { kind: 'table' }>[] {
+  const blocksOf = (section: Section): Block[] => [...section.blocks, ...section.sections.flatMap(blocksOf)]
+  return [...outline.blocks, ...outline.sections.flatMap(blocksOf)].filter((block) => block.kind === 'table')
 }
 
 interface Writer {
@@ -74,16 +83,16 @@ function heading({ doc, root, size }: Writer, text: string, level: number, bookm
   doc.font(face.bold).fontSize(points)
   if (level > 1) doc.y += size
   // Never the last thing on a page: three lines of what follows go with it.
-  const height = doc.heightOfString(text, { width: measure })
-  if (doc.y > margins.top && height < paper.height / 2 && pageIsFull(doc, height + 4 * size)) doc.addPage()
-  root.add(doc.struct(`H${Math.min(level, 6)}`, () => doc.text(held(text), margins.left, doc.y, { width: measure })))
+  const width = measure(doc)
+  makeRoom(doc, Math.min(doc.heightOfString(text, { width }), 8 * size) + 4 * size)
+  root.add(doc.struct(`H${Math.min(level, 6)}`, () => doc.text(held(text), margins.left, doc.y, { width })))
   const bookmark = bookmarks.addItem(text)
   doc.y += size / 2
   return bookmark
 }
 
 function writeBlock({ doc, root, size }: Writer, block: Block): void {
-  const words = { width: measure, lineGap: size / 3 }
+  const words = { width: measure(doc), lineGap: size / 3 }
   doc.font(face.text).fontSize(size)
   switch (block.kind) {
     case 'paragraph':
@@ -93,13 +102,13 @@ function writeBlock({ doc, root, size }: Writer, block: Block): void {
       const side = size + 4
       const left = margins.left + side + 10
       doc.font(face.bold).fontSize(size + 4)
-      if (pageIsFull(doc, 2 * side)) doc.addPage()
+      makeRoom(doc, 2 * side)
       const [x, y] = [margins.left, doc.y]
       const figure = { alt: shapeWords[block.verdict], bbox: [x, y, x + side, y + side] }
       root.add(doc.struct('Figure', figure).add(() => drawShape(doc, block.verdict, x, y + 2, side)))
       root.add(
         doc.struct('P', () =>
-          doc.text(held(`Verdict: ${block.text}`), left, y, { ...words, width: measure - side - 10 }),
+          doc.text(held(`Verdict: ${block.text}`), left, y, { ...words, width: words.width - side - 10 }),
         ),
       )
       break
@@ -120,13 +129,15 @@ function writeBlock({ doc, root, size }: Writer, block: Block): void {
 
 function writeItem(doc: PDFDocument, list: StructureElement, text: string, size: number): void {
   // The dot and the first line of its words stay on one page.
-  if (pageIsFull(doc, size * 1.5)) doc.addPage()
+  makeRoom(doc, size * 1.5)
   const top = doc.y
   const item = doc.struct('LI')
   list.add(item)
   item.add(doc.struct('Lbl', () => doc.text('•', margins.left + 4, top, { lineBreak: false })))
   item.add(
-    doc.struct('LBody', () => doc.text(held(text), margins.left + 22, top, { width: measure - 22, lineGap: size / 3 })),
+    doc.struct('LBody', () =>
+      doc.text(held(text), margins.left + 22, top, { width: measure(doc) - 22, lineGap: size / 3 }),
+    ),
   )
 }
 
