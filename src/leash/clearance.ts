@@ -1,12 +1,13 @@
-import { type Boundary, boundaryOf } from '../geometry/boundary.ts'
+import { boundaryOf } from '../geometry/boundary.ts'
 import type { Scene } from '../geometry/scene.ts'
 import { sayProblem } from '../geometry/scene-problem.ts'
 import type { Metres } from '../units/quantity.ts'
-import type { Bodies, ClearanceAnswer, ClearanceOptions, Motion, Planner } from './answer.ts'
-import { type Certificate, certify } from './certify.ts'
+import type { Bodies, ClearanceAnswer, ClearanceOptions, Planner } from './answer.ts'
+import { apart } from './certify.ts'
 import { freeBound } from './free-bound.ts'
-import { motionOf, type Node } from './nodes.ts'
-import { checkQuestion, reachOf } from './team.ts'
+import { better, type Found, polishAndProve, prove, type Quest, searchTaut, shortfall, type TautResult } from './search.ts'
+import { type Tables, tablesOf } from './tables.ts'
+import { checkQuestion } from './team.ts'
 import { tightestOf } from './tightest.ts'
 import { closedTurn, closedTurnNodes, hasClosedTurn } from './turn.ts'
 
@@ -24,41 +25,68 @@ export const clearance: Planner = (scene, bodies, separation, options = {}) => {
   const free = freeBound(scene, walls, bodies, separation)
   if (free < 0) return nothing(free, true)
   const form = scene.form
+  let high = free
   if (form?.kind === 'turn' && hasClosedTurn(form, bodies)) {
-    const high = Math.min(free, closedTurn(form, bodies, separation) + closedMargin)
+    high = Math.min(free, closedTurn(form, bodies, separation) + closedMargin)
     if (high < 0) return nothing(high, true)
-    const nodes = closedTurnNodes(scene, walls, form, bodies, separation)
-    const found = nodes && worth(scene, walls, bodies, separation, nodes)
-    if (found && found.certificate.clearance >= 0) return answer(scene, walls, bodies, found, high, options)
   }
-  return nothing(free, false)
+  const passes = { left: options.workCap ?? usualCap }
+  const tables = tablesFor(scene, bodies)
+  const quest: Quest = { scene, walls, tables, bodies, separation, phi: freeAngle(bodies, separation), drift: options.drift ?? 0 }
+  if (form?.kind === 'turn' && hasClosedTurn(form, bodies)) {
+    const nodes = closedTurnNodes(scene, walls, form, bodies, separation)
+    const found = nodes && prove(quest, nodes)
+    if (found && found.certificate.clearance >= high - 2 * closedMargin) return answer(quest, found, high, options)
+    const polished = nodes && better(found, polishAndProve(quest, nodes))
+    if (polished && polished.certificate.clearance >= high - 3 * closedMargin) return answer(quest, polished, high, options)
+  }
+  if (!bodies.sideways) return nothing(high, false)
+  const taut = searchTaut(quest, passes)
+  if (taut.settled) high = Math.min(high, highOf(quest, taut))
+  if (high < 0) return nothing(high, true)
+  const found = taut.found
+  if (!found || found.certificate.clearance < 0) return nothing(high, taut.settled)
+  return { ...answer(quest, found, high, options), decided: taut.settled }
 }
 
-interface Found {
-  motion: Motion
-  certificate: Certificate
+/** Passes over the field, each a look at every state twice. */
+const usualCap = 400
+
+/** Optimistic end: the value on the grid with its shortfall, or what was proved with a margin where polishing took hold. */
+function highOf(quest: Quest, taut: TautResult): Metres {
+  const far = shortfall(quest.separation)
+  const proved = taut.found?.certificate.clearance ?? Number.NEGATIVE_INFINITY
+  const kind = quest.scene.form?.kind
+  const margin = kind === 'turn' || kind === 'chicane' || kind === 'indoor' ? 0.01 : 0.02
+  return proved >= taut.value + far / 3 ? Math.min(proved + margin, taut.value + far) : taut.value + far
 }
 
-function worth(
-  scene: Scene,
-  walls: Boundary,
-  bodies: Bodies,
-  separation: Metres,
-  nodes: readonly Node[],
-): Found | null {
-  const motion = motionOf(nodes, reachOf(bodies))
-  const certificate = certify(scene, walls, bodies, separation, motion)
-  return certificate.broken === null ? { motion, certificate } : null
+/** Greatest leash angle at which a taut team keeps its bodies apart: less than phi_max only on a short leash. */
+function freeAngle(bodies: Bodies, separation: Metres): number {
+  const kept = (angle: number) =>
+    apart(bodies, { x: 0, y: 0, psi: 0, length: separation, heading: angle, slack: false }, 0) >= 0
+  for (let i = 1; i <= 180; i++) {
+    const angle = (bodies.phiMax * i) / 180
+    if (!kept(angle)) return (bodies.phiMax * (i - 1)) / 180
+  }
+  return bodies.phiMax
 }
 
-function answer(
-  scene: Scene,
-  walls: Boundary,
-  bodies: Bodies,
-  found: Found,
-  high: Metres,
-  options: ClearanceOptions,
-): ClearanceAnswer {
+const spacing = 0.05
+let lastKey = ''
+let lastTables: Tables | null = null
+
+/** Tables of the last scene are kept: the separations on offer and both directions share them. */
+function tablesFor(scene: Scene, bodies: Bodies): Tables {
+  const key = JSON.stringify([scene.polygon, scene.holes, scene.form ? 0 : scene.start, bodies])
+  if (lastTables === null || key !== lastKey) {
+    lastTables = tablesOf(scene, bodies, spacing)
+    lastKey = key
+  }
+  return lastTables
+}
+
+function answer(quest: Quest, found: Found, high: Metres, options: ClearanceOptions): ClearanceAnswer {
   const { motion, certificate } = found
   const low = certificate.clearance
   return {
@@ -67,7 +95,7 @@ function answer(
     mSlack: low,
     mSlackHigh: Math.max(low, high),
     pauses: low >= (options.pausesAt ?? 0.05) ? 0 : null,
-    tightest: tightestOf(scene, walls, bodies, motion, certificate),
+    tightest: tightestOf(quest.scene, quest.walls, quest.bodies, motion, certificate),
     swing: certificate.swing,
     motion,
     tautMotion: motion,

@@ -225,16 +225,37 @@ function leashMargin(
   const along = (vx - hx) * cu + (vy - hy) * su
   if (along <= 0 || along >= length) return
   const across = (vy - hy) * cu - (vx - hx) * su
-  if (Math.abs(across) > 0.15) return
+  if (Math.abs(across) > 0.3) return
   // The solid lies against the mean of the normals of both walls; the leash must pass on the other side.
   const solid =
     -((walls.nx[i] as number) + (walls.nx[before] as number)) * -su -
     ((walls.ny[i] as number) + (walls.ny[before] as number)) * cu
   const sign = across * solid >= 0 ? 1 : -1
+  // On the wrong side of a corner it is wrong only if it crosses a wall there: another wall may lie between.
+  if (sign < 0 && !crosses(walls, i, hx, hy, cu, su, length) && !crosses(walls, before, hx, hy, cu, su, length)) return
   const value = sign * Math.abs(across) - leashSpare
   // d across: by h (su, -cu), by psi -along.
   const towards = Math.sign(across) * sign
   add(out, value, towards * su, -towards * cu, -towards * along, 0, 0)
+}
+
+function crosses(
+  walls: Boundary,
+  i: number,
+  hx: number,
+  hy: number,
+  cu: number,
+  su: number,
+  length: number,
+): boolean {
+  const nx = walls.nx[i] as number
+  const ny = walls.ny[i] as number
+  const off = (hx - (walls.x0[i] as number)) * nx + (hy - (walls.y0[i] as number)) * ny
+  const end = off + length * (cu * nx + su * ny)
+  if (off > 0 === end > 0) return false
+  const one = ((walls.y0[i] as number) - hy) * cu - ((walls.x0[i] as number) - hx) * su
+  const other = ((walls.y1[i] as number) - hy) * cu - ((walls.x1[i] as number) - hx) * su
+  return one > 0 !== other > 0
 }
 
 /** Slack bodies kept apart; only the attachment's end of the leash moves, so only direction and heading have slopes. */

@@ -50,12 +50,12 @@ export function polish(scene: Scene, terms: PoseTerms, nodes: readonly Node[], s
       // Constraints are weighed against the clearance there is now: met ones then weigh next to nothing.
       const met = leastClearance(terms, goal, margins, track)
       const level = softest(terms, goal, margins, track, sharp, met)
-      const before = level - effort(track) / sharp
+      const before = level - effort(track, sharp) / sharp
       solve(terms, goal, margins, track, work, sharp, level, met, damping)
       let taken = 0
       for (const size of [1, 0.5, 0.25, 0.1]) {
         const tried = follow(track, work, size)
-        const after = softest(terms, goal, margins, tried, sharp, met) - effort(tried) / sharp
+        const after = softest(terms, goal, margins, tried, sharp, met) - effort(tried, sharp) / sharp
         if (after > before) {
           track.x.set(tried.x)
           track.u.set(tried.u)
@@ -146,18 +146,41 @@ function gatherAt(terms: PoseTerms, goal: GoalEdge[], out: Margins, track: Track
     }
 }
 
-/** Least clearance at the nodes; less by what a constraint is missed. */
+/** Least clearance at the nodes and half way between them; less by what a constraint is missed. */
 function hardest(terms: PoseTerms, goal: GoalEdge[], margins: Margins, track: Track): Metres {
   let least = 1
   for (let k = 0; k < track.size; k++) {
     gatherAt(terms, goal, margins, track, k, least)
-    for (let i = 0; i < margins.count; i++) {
-      const value = margins.value[i] as number
-      if (margins.clears[i]) least = Math.min(least, value)
-      else if (value < -1e-3) least = Math.min(least, value - 0.2)
-    }
+    least = lesser(margins, least)
+    if (k === track.size - 1) break
+    const from = k * 4
+    const turn = (track.u[k * 3 + 1] as number) / 2
+    const pull = ((track.pull[k] as number) * Math.exp(track.u[k * 3] as number)) / 2
+    const psi = track.x[from + 2] as number
+    gather(
+      margins,
+      terms,
+      (track.x[from] as number) + pull * Math.cos(psi + turn / 2),
+      (track.x[from + 1] as number) + pull * Math.sin(psi + turn / 2),
+      psi + turn,
+      ((track.length[k] as number) + (track.length[k + 1] as number)) / 2,
+      (track.x[from + 3] as number) + (track.u[k * 3 + 2] as number) / 2,
+      track.slack[k] === 1 || track.slack[k + 1] === 1,
+      least,
+    )
+    least = lesser(margins, least)
   }
   return least
+}
+
+function lesser(margins: Margins, least: Metres): Metres {
+  let now = least
+  for (let i = 0; i < margins.count; i++) {
+    const value = margins.value[i] as number
+    if (margins.clears[i]) now = Math.min(now, value)
+    else if (value < -1e-3) now = Math.min(now, value - 0.2)
+  }
+  return now
 }
 
 /**
@@ -208,7 +231,7 @@ function leastClearance(terms: PoseTerms, goal: GoalEdge[], margins: Margins, tr
 /** Weights of the controls: they keep steps of like size and the leash from swinging without need. */
 const controlWeight = [0.02, 0.05, 0.02]
 /** A step beyond its size is pulled back hard: between far nodes a body could slip through a wall unseen. */
-const beyond = 300
+const beyond = 4
 
 function stepLimit(track: Track, k: number, control: number): number {
   if (control === 0) return 0.6
@@ -221,13 +244,13 @@ function excess(track: Track, k: number, control: number): number {
   return value > limit ? value - limit : value < -limit && control > 0 ? value + limit : 0
 }
 
-function effort(track: Track): number {
+function effort(track: Track, sharp: number): number {
   let sum = 0
   for (let k = 0; k < track.size - 1; k++)
     for (let i = 0; i < 3; i++) {
       const value = track.u[k * 3 + i] as number
       const over = excess(track, k, i)
-      sum += ((controlWeight[i] as number) * value * value + beyond * over * over) / 2
+      sum += ((controlWeight[i] as number) * value * value + (beyond * sharp + 100) * over * over) / 2
     }
   return sum
 }
@@ -308,8 +331,8 @@ function solve(
       }
       for (let i = 0; i < 3; i++) {
         const over = excess(track, k, i)
-        const weight = (controlWeight[i] as number) + (over === 0 ? 0 : beyond)
-        let g = (controlWeight[i] as number) * (track.u[k * 3 + i] as number) + beyond * over
+        const weight = (controlWeight[i] as number) + (over === 0 ? 0 : beyond * sharp + 100)
+        let g = (controlWeight[i] as number) * (track.u[k * 3 + i] as number) + (beyond * sharp + 100) * over
         for (let m = 0; m < 4; m++) g += (B[m * 3 + i] as number) * (v[m] as number)
         qu[i] = g
         for (let j = 0; j < 3; j++) {

@@ -218,7 +218,7 @@ export function rollOut(
         }
       }
     }
-    if (best >= unreachable) { const at=((k % directions) + directions) % directions;const w=field.way[at] as number; const x=here.x+w*Math.cos(directionOf(k)),y=here.y+w*Math.sin(directionOf(k)); console.log('lost', here.x.toFixed(2), here.y.toFixed(2), k, run, sample(field,here.x,here.y,at,run[0],run[1]).toFixed(3),'next',sample(field,x,y,at,run[0],run[1]).toFixed(3),costAt(field,cost,x,y,at,run[0],run[1])); return null }
+    if (best >= unreachable) return null
     const wanted = (k + turn) * slot
     const parts = Math.ceil(Math.abs(wanted - here.psi) / (slot / 2) - 1e-9)
     for (let i = 0; i < parts; i++) {

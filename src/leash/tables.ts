@@ -8,7 +8,7 @@ import { type Grid, gridOf } from './grid.ts'
 /** Directions of leash and robot that the search tells apart. */
 export const directions = 72
 /** Values below this are not told apart: a wall is a wall. Metres. */
-export const floor = -0.1
+export const floor = -0.15
 
 /**
  * What the search looks up again and again, filled as it asks, node by node: the same for every separation.

@@ -1,0 +1,119 @@
+import type { Boundary } from '../geometry/boundary.ts'
+import type { Scene } from '../geometry/scene.ts'
+import type { Metres, Radians } from '../units/quantity.ts'
+import type { Bodies, Motion } from './answer.ts'
+import { type Certificate, certify } from './certify.ts'
+import { assignHeadings } from './headings.ts'
+import type { PoseTerms } from './margins.ts'
+import { motionOf, type Node, refine } from './nodes.ts'
+import { polish, usualStages } from './polish.ts'
+import { costToGo, rollOut } from './roll-out.ts'
+import { directions, type Tables } from './tables.ts'
+import { reachOf } from './team.ts'
+import { type Field, fieldOf, raise, sample } from './value.ts'
+
+/** A motion with its certificate. */
+export interface Found {
+  nodes: Node[]
+  motion: Motion
+  certificate: Certificate
+}
+
+/** What a search is about. */
+export interface Quest {
+  scene: Scene
+  walls: Boundary
+  tables: Tables
+  bodies: Bodies
+  separation: Metres
+  /** Greatest angle of the taut leash to the robot's backward axis at which the bodies also keep apart. */
+  phi: Radians
+  drift: Metres
+}
+
+/** How far a value of this grid was seen to lie below the truth, at most, metres: it grows with the leash. */
+export function shortfall(separation: Metres): Metres {
+  return 0.02 + 0.03 * separation
+}
+
+/** Certifies nodes; null where the motion breaks a promise. */
+export function prove(quest: Quest, nodes: Node[]): Found | null {
+  const motion = motionOf(nodes, reachOf(quest.bodies))
+  const certificate = certify(quest.scene, quest.walls, quest.bodies, quest.separation, motion, quest.drift)
+  return certificate.broken === null ? { nodes, motion, certificate } : null
+}
+
+/** The better proved of two. */
+export function better(one: Found | null, other: Found | null): Found | null {
+  if (!one || !other) return one ?? other
+  return other.certificate.clearance > one.certificate.clearance ? other : one
+}
+
+/** Polishes nodes in rounds, each with shorter steps, until a round gains nothing; the best proved of all rounds. */
+export function polishAndProve(quest: Quest, rough: readonly Node[], rounds = 3): Found | null {
+  const terms: PoseTerms = { walls: quest.walls, bodies: quest.bodies, phi: quest.phi, drift: quest.drift }
+  const reach = reachOf(quest.bodies)
+  let nodes = refine(rough, 0.07, reach)
+  let best: Found | null = null
+  for (let round = 0; round < rounds; round++) {
+    nodes = polish(quest.scene, terms, nodes, round === 0 ? usualStages : usualStages.slice(2))
+    const found = prove(quest, nodes)
+    const gain = found && best ? found.certificate.clearance - best.certificate.clearance : 1
+    best = better(best, found)
+    if (gain < 5e-4) break
+    nodes = refine(nodes, 0.06, reach)
+  }
+  return best
+}
+
+export interface TautResult {
+  found: Found | null
+  /** Value of the start on the grid, metres; the truth lies above it by the shortfall at most. */
+  value: Metres
+  field: Field
+  /** False where the cap on passes was reached. */
+  settled: boolean
+}
+
+/** The taut search: value function, roll-out, polishing, proof. `passes` caps the work and is counted down. */
+export function searchTaut(quest: Quest, passes: { left: number }): TautResult {
+  const { scene } = quest
+  const window = Math.min(directions / 2, Math.floor((quest.phi / (2 * Math.PI)) * directions + 1e-9))
+  const k = Math.round((scene.start.heading / (2 * Math.PI)) * directions)
+  let tau = 0
+  let field = fieldOf(scene, quest.tables, quest.separation, window, tau)
+  let settled = settle(field, passes)
+  let value = sample(field, scene.start.x, scene.start.y, k, 0, 0)
+  // The runs of headings are right at the level they were cut at: cut them again at the value found.
+  if (value > 0.02) {
+    const first = value
+    tau = first
+    field = fieldOf(scene, quest.tables, quest.separation, window, tau)
+    settled = settle(field, passes) && settled
+    value = Math.min(first, sample(field, scene.start.x, scene.start.y, k, 0, 0))
+  }
+  let found: Found | null = null
+  if (value + shortfall(quest.separation) >= 0)
+    for (const below of [0.01, 0.03]) {
+      if (found && found.certificate.clearance > value) break
+      found = better(found, tautFrom(quest, field, value - below))
+    }
+  return { found, value, field, settled }
+}
+
+export function settle(field: Field, passes: { left: number }): boolean {
+  const most = Math.max(0, Math.min(16, passes.left))
+  const used = raise(field, most)
+  passes.left -= Math.min(used, most)
+  return used <= most
+}
+
+function tautFrom(quest: Quest, field: Field, level: Metres): Found | null {
+  const { scene, bodies, walls } = quest
+  const { x, y, heading } = scene.start
+  const cost = costToGo(field, level, 16)
+  const rolled = rollOut(scene, field, cost, level, { x, y, psi: heading })
+  if (!rolled) return null
+  const headed = assignHeadings(walls, bodies, rolled, directions, quest.phi, Math.max(0.02, level + 0.06))
+  return headed && polishAndProve(quest, headed.nodes)
+}
