@@ -64,7 +64,7 @@ const walk: Walk = {
 
 describe('a record on the strip', () => {
   test('the least width rules, the turn says its side, the open part has no length', () => {
-    const [one, two] = stripParts(walk, [])
+    const [one, two] = stripParts(walk, [], 'metric')
     expect(widthOf(walk.segments[0] as Segment)).toBe(1.24)
     expect(one).toMatchObject({ number: 1, length: 9, width: 1.24, turnText: 'right 90°', verdict: null })
     expect(two).toMatchObject({ number: 2, title: 'Part 2', length: null, width: null })
@@ -77,9 +77,9 @@ describe('a record on the strip', () => {
   })
 
   test('a thing is said with its place', () => {
-    expect(featureWords(walk.segments[0]?.features[0] as Segment['features'][number])).toBe(
-      'hinged door, 3.00 m along, right across',
-    )
+    const door = walk.segments[0]?.features[0] as Segment['features'][number]
+    expect(featureWords(door, 'metric')).toBe('hinged door, 3.00 m along, right across')
+    expect(featureWords(door, 'imperial')).toBe('hinged door, 9 ft 10 in along, right across')
     expect(turnWords(undefined)).toBeNull()
   })
 })
@@ -105,8 +105,9 @@ describe('what a keypad sheet asks', () => {
         const entry = quantityEntry({ ...walk, segments: [segment] }, 'f', attribute.id)
         expect([row.id, attribute.id, (entry?.instruments.length ?? 0) > 0]).toEqual([row.id, attribute.id, true])
         // A unit that the parser does not know is an Error.
-        for (const unit of unitsOffered(attribute))
-          expect(() => parseQuantity('1', { quantity: attribute.quantity, unit })).not.toThrow()
+        for (const units of ['metric', 'imperial'] as const)
+          for (const unit of unitsOffered(attribute, units))
+            expect(() => parseQuantity('1', { quantity: attribute.quantity, unit })).not.toThrow()
       }
     expect(asked).toBeGreaterThan(50)
   })
@@ -130,9 +131,14 @@ describe('coming back', () => {
   })
 
   test('an address opens the sheet of an aspect or of a reading', () => {
-    expect(askedFor(walk, 'p2/aspect/edge')).toEqual({ segment: 'p2', trail: [{ at: 'aspect', aspect: 'edge' }] })
-    expect(askedFor(walk, 'p1/reading/c').trail).toEqual([{ at: 'reading', holder: 'door', quantity: 'clearWidth' }])
-    expect(askedFor(walk, 'p1/aspect/nonsense').trail).toEqual([])
+    expect(askedFor(walk, 'p2/p2/edge')).toEqual({ segment: 'p2', trail: [{ at: 'aspect', aspect: 'edge' }] })
+    expect(askedFor(walk, 'p1/door/clearWidth').trail).toEqual([
+      { at: 'reading', holder: 'door', quantity: 'clearWidth' },
+    ])
+    expect(askedFor(walk, 'p1/door/handle').trail).toEqual([{ at: 'feature', feature: 'door' }])
+    expect(askedFor(walk, 'p1/p1/wetness').trail).toEqual([{ at: 'surface' }])
+    expect(askedFor(walk, 'p1/p1/nonsense').trail).toEqual([])
+    expect(askedFor(walk, 'p1/gone/clearWidth').trail).toEqual([])
   })
 
   test('without an address it starts at the part that is still open', () => {
@@ -141,28 +147,23 @@ describe('coming back', () => {
 })
 
 describe('before you leave', () => {
-  test('what is open comes worst harm first and each names its entry', () => {
-    const list = unfinished(walk, null)
-    const order = list.map((one) => harms.indexOf(one.harm))
-    expect(order).toEqual(order.toSorted((a, b) => a - b))
-    expect(list.find((one) => one.segment === 'p2' && one.entry === 'aspect/edge')?.harm).toBe('fall')
-    expect(list.some((one) => one.segment === 'p1' && one.entry === 'aspect/width')).toBe(false)
+  const survey = (over: Walk) => ({
+    survey: 's',
+    view: { name: 'venue', floors: [], zones: [], places: [], walks: [over] },
   })
 
-  test('told answers are listed although they are answers', () => {
-    const told = {
-      ...walk,
-      segments: [{ ...(walk.segments[1] as Segment), words: { edge: { says: 'none', how: 'told' as const } } }],
-    }
-    expect(
-      unfinished(told, null)
-        .filter((one) => one.entry === 'aspect/edge')
-        .map((one) => one.text),
-    ).toEqual(['Part 1, edge: told by someone, nobody looked.'])
+  test('before it is judged, what nobody answered comes worst harm first and each names its entry', () => {
+    const list = unfinished(survey(walk), walk, null)
+    const order = list.map((one) => harms.indexOf(one.harm))
+    expect(order).toEqual(order.toSorted((a, b) => a - b))
+    expect(list.find((one) => one.holder === 'p2' && one.quantity === 'edge')?.harm).toBe('fall')
+    expect(list.some((one) => one.holder === 'p1' && one.quantity === 'width')).toBe(false)
+    expect(list.some((one) => one.holder === 'door' && one.quantity === 'force')).toBe(true)
   })
 
   test('a walk without parts is not finished', () => {
-    expect(unfinished({ ...walk, segments: [] }, null)).toHaveLength(1)
+    const empty = { ...walk, segments: [] }
+    expect(unfinished(survey(empty), empty, null)).toHaveLength(1)
   })
 
   test('a copy that holds everything is checked', () => {

@@ -8,14 +8,15 @@ import {
 } from '../../src/app/components/strip/plain-rules.ts'
 import { addListed, featuresOf, removeListed } from '../../src/app/screens/strip/listed.ts'
 import type { Recorder } from '../../src/app/screens/strip/recorder.ts'
-import { openAspects, soFarLine } from '../../src/app/screens/strip/so-far-line.ts'
+import { answersLeft, partLine } from '../../src/app/screens/strip/so-far-line.ts'
 import { sweptHeight } from '../../src/app/screens/strip/swept-height.ts'
+import type { SegmentResult } from '../../src/judge/result.ts'
 import { type Item, items, neverInherited } from '../../src/record/answers.ts'
 import { foldSurvey } from '../../src/record/fold.ts'
 import { appendDrafts, emptyLog } from '../../src/record/log.ts'
 import { addSegment } from '../../src/record/operations/segment.ts'
 import { addWalk } from '../../src/record/operations/walk.ts'
-import type { Segment } from '../../src/record/survey.ts'
+import type { Segment, SurveyView } from '../../src/record/survey.ts'
 import { defaultTeamCard } from '../../src/record/team-card.ts'
 
 const noon = Date.parse('2026-11-30T12:00:00Z')
@@ -80,26 +81,63 @@ describe('the plain stretch card', () => {
 })
 
 describe('what is left', () => {
-  test('an empty part asks ten aspects, one led by staff three, and neither shows a verdict word', () => {
-    expect(openAspects(segment())).toHaveLength(10)
-    expect(openAspects(segment({ ledBy: 'staff' }))).toEqual(['overhead', 'edge', 'step'])
-    expect(soFarLine(segment(), undefined, false)).toMatch(/10 answers left$/)
-    expect(soFarLine(segment(), undefined, false)).not.toMatch(/usable|cautions|help|do not use|not known/)
+  const view = (one: Segment): SurveyView => ({
+    name: 'v',
+    floors: [],
+    zones: [],
+    places: [],
+    walks: [{ id: 'w', name: 'w', words: {}, states: [], segments: [one] }],
+  })
+  const left = (over: Partial<Segment>) => {
+    const one = segment(over)
+    return answersLeft(one, view(one))
+  }
+  const none = { says: 'none', how: 'swept' as const }
+
+  test('an empty part lacks length, width and its ten items, one led by staff three', () => {
+    expect(left({})).toBe(12)
+    expect(left({ ledBy: 'staff' })).toBe(3)
   })
 
-  test('a surface is answered by all three of its items', () => {
-    const words = { finish: carpet, wetness: { says: 'dry', how: 'swept' as const } }
-    expect(openAspects(segment({ words }))).toContain('surface')
-    expect(openAspects(segment({ words: { ...words, slots: { says: 'none', how: 'swept' } } }))).not.toContain(
-      'surface',
+  test('an answer counts, but not one that was too quick or taken over', () => {
+    expect(left({ words: { edge: none } })).toBe(11)
+    expect(left({ words: { edge: { ...none, tooQuick: true } } })).toBe(12)
+    expect(left({ words: { edge: { ...none, how: 'inherited' } } })).toBe(12)
+  })
+
+  test('while answers are missing the line has no verdict word, whatever the judge said before', () => {
+    const one = segment({ words: { edge: none } })
+    const old = { verdict: 'usable', sentence: 'Width governs.' } as SegmentResult
+    const line = partLine(one, view(one), old, false)
+    expect(line.text).toBe('So far: nothing against it; 11 answers left')
+    expect(line.detail).toMatch(/and 7 more$/)
+    expect(`${line.text} ${line.detail}`).not.toMatch(/usable|cautions|with help|do not use|not known/)
+  })
+
+  test('a narrow width stands against it at once', () => {
+    const width = { id: 'r', raw: '0.6 m', value: 0.6, bound: 'exact' as const, instrument: 'tape' as const }
+    const one = segment({ readings: { width: [width] } })
+    expect(partLine(one, view(one), undefined, true).text).toMatch(/^So far against it: .* 11 answers left$/)
+  })
+
+  test('a complete part has its verdict, but not while it is judged anew', () => {
+    const words = Object.fromEntries(
+      (Object.keys(items) as Item[]).map((item) => [
+        item,
+        { says: item === 'end-sign' ? 'mat' : 'none', how: 'swept' as const },
+      ]),
     )
-  })
-
-  test('a sweep that was too quick, or was inherited, is no answer', () => {
-    const edge = { says: 'none', how: 'swept' as const }
-    expect(openAspects(segment({ words: { edge } }))).not.toContain('edge')
-    expect(openAspects(segment({ words: { edge: { ...edge, tooQuick: true } } }))).toContain('edge')
-    expect(openAspects(segment({ words: { edge: { says: 'none', how: 'inherited' } } }))).toContain('edge')
+    const taken = (id: string, value: number) => [
+      { id, raw: `${value} m`, value, bound: 'exact' as const, instrument: 'tape' as const },
+    ]
+    const one = segment({ words, readings: { length: taken('l', 8), width: taken('w', 2), overhead: taken('o', 2.1) } })
+    const judged = { verdict: 'with-cautions', sentence: 'Width governs.' } as SegmentResult
+    expect(partLine(one, view(one), judged, false)).toEqual({
+      text: 'with cautions',
+      detail: 'Width governs.',
+      complete: true,
+    })
+    expect(partLine(one, view(one), judged, true).text).toBe('Complete, being judged')
   })
 })
 
@@ -130,7 +168,6 @@ describe('a thing and the answer "listed"', () => {
     expect(now().words.door?.says).toBe('listed')
     remove('two')
     expect(now().words.door).toBeUndefined()
-    expect(openAspects(now())).toContain('door')
   })
 
   test('a grating answers the slots, a wet patch the wetness, a narrowing nothing', () => {

@@ -4,7 +4,7 @@ import { type Bound, type FieldQuantity, parseQuantity } from '../../../units/pa
 import { Chips } from './chips.tsx'
 import { Keypad } from './keypad.tsx'
 import { remember, remembered } from './remembered.ts'
-import { unitsOffered } from './units-offered.ts'
+import { type Units, unitsOffered } from './units-offered.ts'
 
 /** What the form hands over when it is understood. SI value; `raw` as typed, its unit with it. */
 export interface TypedReading {
@@ -25,6 +25,7 @@ export interface ReadingFormProps {
   /** Under which the instrument and the unit are remembered: "width". */
   quantity: string
   field: { quantity: FieldQuantity; unit: string; signed?: boolean }
+  units: Units
   /** In the order offered; empty: no tool is asked for. */
   instruments: readonly InstrumentId[]
   /** A reading stands already: is this one at the same place? Asked, never guessed. */
@@ -41,7 +42,9 @@ type Trouble = { text: string; choices: readonly { label: string; text: string }
 /** The keypad sheet's inside: value, unit, tool, then Save. */
 export function ReadingForm(props: ReadingFormProps) {
   const [text, setText] = useState(props.initial?.text ?? '')
-  const [unit, setUnit] = useState(() => firstKnown(unitsOffered(props.field), remembered(`unit ${props.quantity}`)))
+  const [unit, setUnit] = useState(() =>
+    firstKnown(unitsOffered(props.field, props.units), remembered(`unit ${props.quantity}`)),
+  )
   const [instrument, setInstrument] = useState<InstrumentId | null>(() =>
     firstInstrument(props.instruments, props.initial?.instrument || remembered(`tool ${props.quantity}`)),
   )
@@ -159,10 +162,10 @@ export function ReadingForm(props: ReadingFormProps) {
         </div>
       )}
       <Keypad type={(mark) => change(text + mark)} rubOut={() => change(text.slice(0, -1))} />
-      {unitsOffered(props.field).length > 1 && (
+      {unitsOffered(props.field, props.units).length > 1 && (
         <Chips
           legend="Unit"
-          choices={unitsOffered(props.field).map((one) => ({ value: one, label: one }))}
+          choices={unitsOffered(props.field, props.units).map((one) => ({ value: one, label: one }))}
           chosen={unit}
           choose={setUnit}
         />

@@ -5,6 +5,7 @@ import type { Answer, Feature, Reading, Segment, Walk } from '../../../record/su
 import { formatAngle, formatLength } from '../../../units/format.ts'
 import type { Metres } from '../../../units/quantity.ts'
 import type { StripItem, StripPart } from './layout-part.ts'
+import type { Units } from './units-offered.ts'
 
 /** What the strip says of a record, in words: the drawing and the list say the same. */
 
@@ -41,12 +42,12 @@ export function turnAngle(turn: Feature): number | null {
 }
 
 /** The parts of a walk as the map draws them. Verdicts are shown for complete parts only. */
-export function stripParts(walk: Walk, results: readonly SegmentResult[]): StripPart[] {
+export function stripParts(walk: Walk, results: readonly SegmentResult[], units: Units): StripPart[] {
   const byId = new Map(results.map((one) => [one.id, one]))
   return walk.segments.map((segment, index) => {
     const length = lengthOf(segment)
     const width = widthOf(segment)
-    const sizes = [length === null ? null : shown(length), width === null ? null : `${shown(width)} wide`]
+    const sizes = [length === null ? null : shown(length, units), width === null ? null : `${shown(width, units)} wide`]
     const result = byId.get(segment.id)
     return {
       id: segment.id,
@@ -82,8 +83,13 @@ export function featureName(feature: Feature): string {
 }
 
 /** A clear width or length there is: never shown larger than measured. */
-export function shown(value: Metres): string {
-  return formatLength(value, { system: 'metric', towards: 'down' })
+export function shown(value: Metres, units: Units): string {
+  return formatLength(value, { system: units, towards: 'down' })
+}
+
+/** A height that is needed: never shown lower. */
+export function rodHeight(value: Metres, units: Units): string {
+  return formatLength(value, { system: units, towards: 'up' })
 }
 
 /** "width 1.24 m, tape on the floor, at the lockers" */
@@ -123,13 +129,13 @@ export function answerWords(item: string, answer: Answer): string {
 }
 
 /** "hinged door, 3.00 m along, on the left" */
-export function featureWords(feature: Feature): string {
+export function featureWords(feature: Feature, units: Units): string {
   const side = { left: 'on the left', right: 'on the right', centre: 'in the middle', across: 'right across' } as const
   return [
     featureName(feature),
-    feature.along === undefined ? '' : `${shown(feature.along)} along`,
+    feature.along === undefined ? '' : `${shown(feature.along, units)} along`,
     feature.side ? side[feature.side] : '',
-    feature.offset === undefined ? '' : `${shown(feature.offset)} from the walking line`,
+    feature.offset === undefined ? '' : `${shown(feature.offset, units)} from the walking line`,
     feature.ledBy ? `led by ${leaderWords[feature.ledBy]}` : '',
   ]
     .filter((one) => one !== '')

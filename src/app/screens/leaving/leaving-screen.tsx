@@ -1,6 +1,8 @@
 import { useState } from 'preact/hooks'
+import type { LeavingFinding } from '../../../judge/leaving.ts'
 import { writeSurveyFile } from '../../../record/file/index.ts'
 import { takeSafeSide } from '../../../record/operations/reading.ts'
+import type { Reading, Walk } from '../../../record/survey.ts'
 import { FileKey } from '../../components/file-key.tsx'
 import { PageHead } from '../../components/page-head.tsx'
 import { StatusLine } from '../../components/status-line.tsx'
@@ -10,7 +12,7 @@ import type { Session } from '../../state/session.ts'
 import { useWriter } from '../strip/recorder.ts'
 import { checkCopy, copyName } from './copy-check.ts'
 import { handOver } from './hand-over.ts'
-import { type Unfinished, unfinished } from './unfinished.ts'
+import { unfinished } from './unfinished.ts'
 
 const harmWords = {
   fall: 'Fall',
@@ -32,7 +34,7 @@ export function LeavingScreen(props: { session: Session; walk: string }) {
       </main>
     )
   const judgement = session.judgement.value
-  const result = judgement.stale ? null : (judgement.walks.find((one) => one.id === walk.id) ?? null)
+  const assessment = judgement.stale ? null : judgement.assessment
   const address = `/venue/${survey}/walk/${walk.id}`
   return (
     <main class="page">
@@ -49,13 +51,25 @@ export function LeavingScreen(props: { session: Session; walk: string }) {
       )}
       {judgement.problem && <p class="trouble">The walk could not be judged: {judgement.problem}</p>}
       {judgement.stale && <p class="soft">Being judged: readings too close to call are added when it is done.</p>}
-      <LeftToDo session={session} judged={result !== null} list={unfinished(walk, result)} address={address} />
+      <LeftToDo
+        session={session}
+        walk={walk}
+        judged={assessment !== null}
+        list={unfinished(session.survey.value, walk, assessment)}
+        address={address}
+      />
       <Copy session={session} />
     </main>
   )
 }
 
-function LeftToDo(props: { session: Session; judged: boolean; list: readonly Unfinished[]; address: string }) {
+function LeftToDo(props: {
+  session: Session
+  walk: Walk
+  judged: boolean
+  list: readonly LeavingFinding[]
+  address: string
+}) {
   const writer = useWriter(props.session)
   const { list } = props
   if (list.length === 0)
@@ -81,28 +95,35 @@ function LeftToDo(props: { session: Session; judged: boolean; list: readonly Unf
           <ul class="rows">
             {list
               .filter((one) => one.harm === harm)
-              .map((one) => (
-                <li key={one.key}>
-                  <span>{one.text}</span>
-                  {one.advice && <span class="soft">{one.advice}</span>}
-                  <span class="keys">
-                    <a class="key" href={entryAddress(props.address, one)}>
-                      Go to it<span class="hidden">: {one.text}</span>
-                    </a>
-                    {one.tooClose && (
-                      <button
-                        type="button"
-                        class="key"
-                        onClick={() =>
-                          void writer.write((log) => takeSafeSide(log, one.tooClose ?? ''), 'the safe side is taken')
-                        }
-                      >
-                        Take the safe side<span class="hidden">: {one.text}</span>
-                      </button>
-                    )}
-                  </span>
-                </li>
-              ))}
+              .map((one) => {
+                const close = one.kind === 'too-close' ? readingsAt(props.walk, one) : []
+                return (
+                  <li key={`${one.kind} ${one.holder} ${one.quantity} ${one.text}`}>
+                    <span>{one.text}</span>
+                    <span class="keys">
+                      {one.segment && (
+                        <a class="key" href={entryAddress(props.address, one)}>
+                          Go to it<span class="hidden">: {one.text}</span>
+                        </a>
+                      )}
+                      {close.length > 0 && (
+                        <button
+                          type="button"
+                          class="key"
+                          onClick={() =>
+                            void writer.write(
+                              (log) => close.flatMap((reading) => takeSafeSide(log, reading.id)),
+                              'the safe side is taken',
+                            )
+                          }
+                        >
+                          Take the safe side<span class="hidden">: {one.text}</span>
+                        </button>
+                      )}
+                    </span>
+                  </li>
+                )
+              })}
           </ul>
         </div>
       ))}
@@ -110,8 +131,15 @@ function LeftToDo(props: { session: Session; judged: boolean; list: readonly Unf
   )
 }
 
-function entryAddress(address: string, one: Unfinished): string {
-  const parts = [one.segment, ...(one.entry?.split('/') ?? [])].filter((part) => part !== null)
+/** Readings that do not yet count at their unsafe end. */
+function readingsAt(walk: Walk, one: LeavingFinding): Reading[] {
+  const holders = walk.segments.flatMap((part) => [part, ...part.features, ...(part.turn ? [part.turn] : [])])
+  const readings = holders.find(({ id }) => id === one.holder)?.readings[one.quantity ?? ''] ?? []
+  return readings.filter((reading) => !reading.safeSide)
+}
+
+function entryAddress(address: string, one: LeavingFinding): string {
+  const parts = [one.segment, one.holder, one.quantity].filter((part) => part !== null)
   return `${address}?open=${parts.map((part) => encodeURIComponent(part)).join('/')}`
 }
 

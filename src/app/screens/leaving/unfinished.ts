@@ -1,45 +1,37 @@
-import { type Harm, harms, type WalkResult } from '../../../judge/result.ts'
+import { beforeYouLeave, type LeavingFinding } from '../../../judge/leaving.ts'
+import { type Assessment, type Harm, harms } from '../../../judge/result.ts'
+import { soFar } from '../../../judge/so-far.ts'
 import { type Aspect, items } from '../../../record/answers.ts'
-import type { Reading, Segment, Walk } from '../../../record/survey.ts'
-import { openAspects } from '../strip/so-far-line.ts'
+import type { Survey, Walk } from '../../../record/survey.ts'
+import { pack } from '../../../standards/packs.ts'
 
-/** One thing that is not finished, and where it is entered. */
-export interface Unfinished {
-  key: string
-  text: string
-  /** What would settle it. */
-  advice: string | null
-  harm: Harm
-  segment: string | null
-  /** `aspect/<aspect>` or `reading/<id>` of the segment; null: the segment itself. */
-  entry: string | null
-  /** The safe side can be taken of this reading. */
-  tooClose: string | null
+/** What is left to do on one walk, worst harm first. Without a judgement: what nobody answered, from the record alone. */
+export function unfinished(survey: Survey, walk: Walk, assessment: Assessment | null): LeavingFinding[] {
+  if (walk.segments.length === 0)
+    return [{ ...nowhere(walk), harm: 'fall', text: 'No part of this walk is recorded: nothing of it is known.' }]
+  if (assessment) return beforeYouLeave(survey, assessment).filter((one) => one.walk === walk.id)
+  const { view } = survey
+  return walk.segments
+    .flatMap((segment, index) =>
+      soFar(segment, view, view.team, pack(view.code)).missing.map(
+        (one): LeavingFinding => ({
+          ...nowhere(walk),
+          harm: harmOf(one.item),
+          text: `Part ${index + 1}: nobody answered ${one.name}.`,
+          segment: segment.id,
+          holder: one.holder,
+          quantity: one.item,
+        }),
+      ),
+    )
+    .sort((a, b) => harms.indexOf(a.harm) - harms.indexOf(b.harm))
 }
 
-/** What is left to do before leaving, worst harm first: from the record at once, from the judge as far as it has come. */
-export function unfinished(walk: Walk, result: WalkResult | null): Unfinished[] {
-  if (walk.segments.length === 0) return [noParts]
-  const found = walk.segments.flatMap((segment, index) => [
-    ...missing(segment, index),
-    ...hasty(segment, index),
-    ...judged(segment, result),
-  ])
-  const once = new Map(found.map((one) => [one.key, one]))
-  return [...once.values()].sort((a, b) => harms.indexOf(a.harm) - harms.indexOf(b.harm))
+function nowhere(walk: Walk): Omit<LeavingFinding, 'harm' | 'text'> {
+  return { kind: 'missing', walk: walk.id, segment: null, holder: null, quantity: null }
 }
 
-const noParts: Unfinished = {
-  key: 'no parts',
-  text: 'No part of this walk is recorded: nothing of it is known.',
-  advice: null,
-  harm: 'fall',
-  segment: null,
-  entry: null,
-  tooClose: null,
-}
-
-const harmOf: Record<Aspect, Harm> = {
+const harmOfAspect: Record<Aspect, Harm> = {
   edge: 'fall',
   step: 'fall',
   surface: 'fall',
@@ -52,73 +44,8 @@ const harmOf: Record<Aspect, Harm> = {
   'end-sign': 'comfort',
 }
 
-function missing(segment: Segment, index: number): Unfinished[] {
-  return openAspects(segment).map((aspect) => ({
-    key: `${segment.id} ${aspect}`,
-    text: `Part ${index + 1}: nobody answered ${aspect.replace('-', ' ')}.`,
-    advice: null,
-    harm: harmOf[aspect],
-    segment: segment.id,
-    entry: `aspect/${aspect}`,
-    tooClose: null,
-  }))
-}
-
-/** Too quick, told, by eye. */
-function hasty(segment: Segment, index: number): Unfinished[] {
-  return Object.entries(segment.words).flatMap(([item, answer]) => {
-    const aspect = item in items ? items[item as keyof typeof items].aspect : null
-    const why = answer.rivals?.length
-      ? 'two people said different things'
-      : answer.how === 'told'
-        ? 'told by someone, nobody looked'
-        : answer.how === 'by-eye'
-          ? 'judged by eye from afar'
-          : null
-    if (!aspect || !why) return []
-    return [
-      {
-        key: `${segment.id} ${item} ${why}`,
-        text: `Part ${index + 1}, ${item.replace('-', ' ')}: ${why}.`,
-        advice: null,
-        harm: harmOf[aspect],
-        segment: segment.id,
-        entry: `aspect/${aspect}`,
-        tooClose: null,
-      },
-    ]
-  })
-}
-
-function judged(segment: Segment, result: WalkResult | null): Unfinished[] {
-  const own = result?.segments.find((one) => one.id === segment.id)
-  if (!own) return []
-  const retakes = own.retakes.map((one) => ({
-    key: `retake ${one.reading}`,
-    text: one.why,
-    advice: `Measure again: ${one.instrument}`,
-    harm: one.harm ?? 'comfort',
-    segment: segment.id,
-    entry: `reading/${one.reading}`,
-    tooClose: readingsOf(segment).some((reading) => reading.id === one.reading && !reading.safeSide)
-      ? one.reading
-      : null,
-  }))
-  const why = own.why
-    .filter((one) => one.aspect === undefined || !openAspects(segment).includes(one.aspect))
-    .map((one) => ({
-      key: `why ${segment.id} ${one.text}`,
-      text: one.text,
-      advice: null,
-      harm: one.harm ?? 'comfort',
-      segment: segment.id,
-      entry: one.readings[0] ? `reading/${one.readings[0]}` : one.aspect ? `aspect/${one.aspect}` : null,
-      tooClose: null,
-    }))
-  return [...retakes, ...why]
-}
-
-function readingsOf(segment: Segment): Reading[] {
-  const holders = [segment, ...segment.features, ...(segment.turn ? [segment.turn] : [])]
-  return holders.flatMap((one) => Object.values(one.readings).flat())
+/** Of a thing on the way, until it is judged: the worst. */
+function harmOf(item: string): Harm {
+  if (item in items) return harmOfAspect[items[item as keyof typeof items].aspect]
+  return harmOfAspect[item as Aspect] ?? 'fall'
 }

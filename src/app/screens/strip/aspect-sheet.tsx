@@ -3,7 +3,7 @@ import { kinds } from '../../../catalogue/kinds.ts'
 import { setWord } from '../../../record/operations/answer.ts'
 import { addReading } from '../../../record/operations/reading.ts'
 import { sentence } from '../../components/strip/sentence.ts'
-import { featureWords, shown } from '../../components/strip/strip-words.ts'
+import { featureWords, rodHeight } from '../../components/strip/strip-words.ts'
 import { type How, HowChips } from './how-chips.tsx'
 import { addListed, featuresOf, listedItem } from './listed.ts'
 import type { Recorder } from './recorder.ts'
@@ -33,7 +33,7 @@ export function AspectSheet(props: {
         ...setWord(log, segment.id, item, recorder.answer('none', how)),
         ...(sweptOverhead ? addReading(log, segment.id, 'overhead', sweptReading(recorder, height)) : []),
       ],
-      sweptOverhead ? `overhead swept to ${shown(height)}, nothing` : `${title}: none`,
+      sweptOverhead ? `overhead swept to ${rodHeight(height, recorder.units)}, nothing` : `${title}: none`,
     )
     if (saved) props.done()
   }
@@ -42,7 +42,7 @@ export function AspectSheet(props: {
     <div class="sheet-keys">
       <button type="button" class="key primary" disabled={there.length > 0} onClick={() => void none()}>
         {aspectTitles[aspect].none}
-        {aspect === 'overhead' && <small>rod at {shown(height)}, both shoulders</small>}
+        {aspect === 'overhead' && <small>rod at {rodHeight(height, recorder.units)}, both shoulders</small>}
       </button>
       <HowChips how={how} choose={setHow} />
       {there.length > 0 && <p class="soft">Off: a thing of this kind is listed on this part.</p>}
@@ -53,7 +53,7 @@ export function AspectSheet(props: {
           class="key wide"
           onClick={() => props.go({ at: 'feature', feature: feature.id })}
         >
-          Change {featureWords(feature)}
+          Change {featureWords(feature, recorder.units)}
         </button>
       ))}
       {aspect === 'overhead' && (

@@ -66,7 +66,8 @@ export function FeatureSheet(props: {
               class="key wide"
               onClick={() => props.go({ at: 'place', feature: feature.id, field: one })}
             >
-              {sentence(placeNames[one])}: {feature[one] === undefined ? 'not said' : shown(feature[one])}
+              {sentence(placeNames[one])}:{' '}
+              {feature[one] === undefined ? 'not said' : shown(feature[one], recorder.units)}
             </button>
           ))}
         </>

@@ -13,7 +13,7 @@ const choices: readonly { value: How; label: string }[] = [
 export function HowChips(props: { how: How; choose(how: How): void }) {
   return (
     <details>
-      <summary>How do you know: {choices.find((one) => one.value === props.how)?.label.toLowerCase()}</summary>
+      <summary>How do you know? {choices.find((one) => one.value === props.how)?.label}</summary>
       <Chips legend="How do you know" choices={choices} chosen={props.how} choose={(how) => props.choose(how as How)} />
     </details>
   )

@@ -37,7 +37,11 @@ export function MoreSheet(props: { recorder: Recorder; go(route: SheetRoute): vo
         />
       </label>
       <p role="status" class="soft">
-        {found.length === 0 ? 'Nothing by that word: try another.' : `${found.length} kinds`}
+        {found.length === 0
+          ? 'Nothing by that word: try another.'
+          : found.length === 1
+            ? '1 kind'
+            : `${found.length} kinds`}
       </p>
       <div class="kind-keys">
         {found.map((one) => (

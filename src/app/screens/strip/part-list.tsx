@@ -8,6 +8,7 @@ import { remove } from '../../../record/operations/removal.ts'
 import type { Segment } from '../../../record/survey.ts'
 import type { StripPart } from '../../components/strip/layout-part.ts'
 import { answerWords, featureWords, lengthOf, readingWords, turnWords } from '../../components/strip/strip-words.ts'
+import type { Units } from '../../components/strip/units-offered.ts'
 import { removeListed } from './listed.ts'
 import type { Recorder } from './recorder.ts'
 import { type SheetRoute, sheetOfAspect } from './sheet-route.ts'
@@ -26,7 +27,8 @@ interface Entry {
 export function PartList(props: {
   recorder: Recorder
   parts: readonly StripPart[]
-  verdictWords(index: number): string
+  /** What is said of a part in a few words. */
+  words(part: Segment): string
   pick(index: number): void
   openNext(): void
   go(route: SheetRoute): void
@@ -47,13 +49,13 @@ export function PartList(props: {
                   {segment.name ? `, ${segment.name}` : ''}
                   {here ? ' (you stand at its start)' : ''}
                 </b>
-                <span>{props.verdictWords(index)}</span>
+                <span>{props.words(segment)}</span>
               </button>
               {here ? (
-                <Entries recorder={recorder} entries={entriesOf(segment)} go={props.go} />
+                <Entries recorder={recorder} entries={entriesOf(segment, recorder.units)} go={props.go} />
               ) : (
                 <p class="soft">
-                  {entriesOf(segment)
+                  {entriesOf(segment, recorder.units)
                     .map((one) => one.text)
                     .join('; ') || 'Nothing entered yet.'}
                 </p>
@@ -93,7 +95,7 @@ function Entries(props: { recorder: Recorder; entries: readonly Entry[]; go(rout
   )
 }
 
-function entriesOf(segment: Segment): Entry[] {
+function entriesOf(segment: Segment, units: Units): Entry[] {
   const readings = Object.entries(segment.readings).flatMap(([quantity, list]) =>
     list.map(
       (one): Entry => ({
@@ -120,7 +122,7 @@ function entriesOf(segment: Segment): Entry[] {
     (one): Entry => ({
       key: one.id,
       text: [
-        featureWords(one),
+        featureWords(one, units),
         ...Object.entries(one.readings).flatMap(([id, list]) =>
           list.map((reading) => readingWords(attributeName(one.kind, id), reading)),
         ),

@@ -17,7 +17,7 @@ import {
   zoneAsBefore,
 } from '../../components/strip/plain-rules.ts'
 import { remember, remembered } from '../../components/strip/remembered.ts'
-import { lengthOf, shown, widthOf } from '../../components/strip/strip-words.ts'
+import { lengthOf, rodHeight, shown, widthOf } from '../../components/strip/strip-words.ts'
 import { sweptReading } from './aspect-sheet.tsx'
 import { featuresOf } from './listed.ts'
 import { nextPart } from './reading-sheet.tsx'
@@ -100,7 +100,7 @@ export function PlainSheet(props: {
         }),
         ...setWord(log, segment.id, 'overhead', recorder.answer('none', 'swept', mark())),
       ],
-      `overhead swept to ${shown(height)}, nothing${quick() ? ', too quick: look again' : ''}`,
+      `overhead swept to ${rodHeight(height, recorder.units)}, nothing${quick() ? ', too quick: look again' : ''}`,
     )
   const passedStick = () => {
     const reading: Reading = {
@@ -131,7 +131,7 @@ export function PlainSheet(props: {
         class="key wide"
         onClick={() => go({ at: 'reading', holder: segment.id, quantity: 'length' })}
       >
-        {length === null ? 'Length' : `Length ${shown(length)}: measure again`}
+        {length === null ? 'Length' : `Length ${shown(length, recorder.units)}: measure again`}
       </button>
       <h3>2 Least clear width</h3>
       <div class="turn-keys">
@@ -142,13 +142,15 @@ export function PlainSheet(props: {
           press={() => void passedStick()}
         />
         <button type="button" class="key" onClick={() => go({ at: 'reading', holder: segment.id, quantity: 'width' })}>
-          {widthOf(segment) === null ? 'A value' : `Least ${shown(widthOf(segment) ?? 0)}: another value`}
+          {widthOf(segment) === null
+            ? 'A value'
+            : `Least ${shown(widthOf(segment) ?? 0, recorder.units)}: another value`}
         </button>
       </div>
       <StickLength stick={stick} choose={setStick} />
       <h3>3 Swept</h3>
       <PlainKey
-        label={`Rod at ${shown(height)}, both shoulders, nothing`}
+        label={`Rod at ${rodHeight(height, recorder.units)}, both shoulders, nothing`}
         given={segment.words.overhead?.says === 'none' && !segment.words.overhead.tooQuick}
         why={
           featuresOf(segment, 'overhead')[0]

@@ -64,6 +64,7 @@ export function ReadingSheet(props: {
       title={`${entry.name} of part ${entry.index + 1}`}
       quantity={feature ? `${feature.kind} ${quantity}` : quantity}
       field={entry.field}
+      units={recorder.units}
       instruments={entry.instruments}
       asksPlace={quantity === 'width' && !feature && entry.readings.length > 0}
       asksFound={entry.field.quantity === 'length' && quantity !== 'length'}
@@ -98,6 +99,7 @@ export function PlaceSheet(props: { recorder: Recorder; feature: Feature; field:
       title={name}
       quantity={field}
       field={{ quantity: 'length', unit: 'm' }}
+      units={recorder.units}
       instruments={[]}
       asksPlace={false}
       asksFound={false}

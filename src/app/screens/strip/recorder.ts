@@ -2,6 +2,7 @@ import { useRef, useState } from 'preact/hooks'
 import type { FactDraft } from '../../../record/facts.ts'
 import type { FactLog } from '../../../record/log.ts'
 import type { Answer, Segment, Walk } from '../../../record/survey.ts'
+import type { Units } from '../../components/strip/units-offered.ts'
 import type { Committed, Session } from '../../state/session.ts'
 
 /** What is said of the last act: read out politely, and kept on screen until the next. */
@@ -13,6 +14,7 @@ export interface Said {
 /** The one way in which the sheets of the recording screen write. */
 export interface Recorder {
   session: Session
+  units: Units
   walk: Walk
   segment: Segment
   index: number

@@ -1,30 +1,73 @@
-import type { SegmentResult } from '../../../judge/result.ts'
-import { type Aspect, aspects, aspectsLedOtherwise, type Item, items, neverInherited } from '../../../record/answers.ts'
-import type { Segment } from '../../../record/survey.ts'
+import type { Check, SegmentResult } from '../../../judge/result.ts'
+import { type Missing, soFar } from '../../../judge/so-far.ts'
+import { type Item, items, neverInherited } from '../../../record/answers.ts'
+import type { Segment, SurveyView } from '../../../record/survey.ts'
+import { pack } from '../../../standards/packs.ts'
 import { verdictWord } from '../../components/verdict-word.ts'
 
-/** Aspects of a part that nobody has answered yet. */
-export function openAspects(segment: Segment): Aspect[] {
-  const asked = segment.ledBy === 'robot' ? aspects : aspectsLedOtherwise
-  return asked.filter((aspect) => {
-    if (aspect === 'length' || aspect === 'width') return (segment.readings[aspect] ?? []).length === 0
-    return (Object.keys(items) as Item[]).some((item) => items[item].aspect === aspect && !isAnswered(segment, item))
-  })
+/** What the top line says of a part. */
+export interface PartLine {
+  text: string
+  /** Names of what is left, or the governing sentence of a complete part. */
+  detail: string
+  complete: boolean
 }
+
+/** While answers are missing there is no verdict word; while a newer judgement is made the old one says so. */
+export function partLine(
+  segment: Segment,
+  view: SurveyView,
+  result: SegmentResult | undefined,
+  stale: boolean,
+): PartLine {
+  const now = soFar(segment, view, view.team, pack(view.code))
+  const left = [...now.missing, ...again(segment)]
+  if (left.length > 0) {
+    const answers = `${left.length} ${left.length === 1 ? 'answer' : 'answers'} left`
+    return {
+      text: now.against
+        ? `So far against it: ${now.against.sentence} ${answers}`
+        : `So far: nothing against it; ${answers}`,
+      detail: someOf(left.map((one) => one.name)),
+      complete: false,
+    }
+  }
+  if (!result) return { text: stale ? 'Complete, being judged' : 'Complete, not judged', detail: '', complete: true }
+  return stale
+    ? { text: 'Complete, being judged', detail: '', complete: true }
+    : { text: verdictWord(result.verdict), detail: result.sentence, complete: true }
+}
+
+/** Help that is wanted only because an answer is still missing is nothing against the part yet. */
+function isSeen(against: Check): boolean {
+  return against.state !== 'needs-help' || against.readings.length > 0
+}
+
+/** How many answers a part lacks. */
+export function answersLeft(segment: Segment, view: SurveyView): number {
+  const known = counted.get(segment)
+  if (known !== undefined) return known
+  const left = soFar(segment, view, view.team, pack(view.code)).missing.length + again(segment).length
+  counted.set(segment, left)
+  return left
+}
+
+/** A view is never changed in place: the same segment lacks the same answers. */
+const counted = new WeakMap<Segment, number>()
 
 /** A sweep that was too quick is none; overhead, edge, step and door are never taken over from the part before. */
-function isAnswered(segment: Segment, item: Item): boolean {
-  const answer = segment.words[item]
-  if (!answer || answer.tooQuick) return false
-  if (item === 'overhead' && answer.says === 'none' && (segment.readings.overhead ?? []).length === 0) return false
-  return !(answer.how === 'inherited' && neverInherited.includes(item))
+function again(segment: Segment): Missing[] {
+  return (Object.keys(items) as Item[])
+    .filter((item) => {
+      const answer = segment.words[item]
+      return answer?.tooQuick || (answer?.how === 'inherited' && neverInherited.includes(item))
+    })
+    .map((item) => ({ holder: segment.id, item, name: `${item.replace('-', ' ')} again` }))
 }
 
-/** The top line. While answers are missing there is no verdict word; while a newer judgement is made neither. */
-export function soFarLine(segment: Segment, result: SegmentResult | undefined, stale: boolean): string {
-  const open = openAspects(segment)
-  if (open.length > 0)
-    return `So far: nothing against it; ${open.length} ${open.length === 1 ? 'answer' : 'answers'} left`
-  if (!result) return stale ? 'Judging' : 'Not judged yet'
-  return `${verdictWord(result.verdict)}${stale ? ', being judged again' : ''}`
+const mostNamed = 4
+
+function someOf(names: readonly string[]): string {
+  const shown = names.slice(0, mostNamed).join(', ')
+  return names.length > mostNamed ? `${shown} and ${names.length - mostNamed} more` : shown
 }

@@ -1,13 +1,15 @@
 import { useMemo, useState } from 'preact/hooks'
 import { useLocation } from 'preact-iso'
 import { addSegment } from '../../../record/operations/segment.ts'
-import type { Walk } from '../../../record/survey.ts'
+import type { Segment, Walk } from '../../../record/survey.ts'
 import '../../components/strip/strip.css'
 import { usePageHead } from '../../components/page-head.tsx'
 import { StripMap } from '../../components/strip/strip-map.tsx'
 import { stripParts } from '../../components/strip/strip-words.ts'
 import { TapeRule } from '../../components/tape-rule.tsx'
+import { verdictWord } from '../../components/verdict-word.ts'
 import type { Session } from '../../state/session.ts'
+import { choices } from '../../state/settings.ts'
 import { askedFor } from './asked-for.ts'
 import { placeOfDraft } from './draft-route.ts'
 import { Keys } from './keys.tsx'
@@ -16,7 +18,7 @@ import { nextPart } from './reading-sheet.tsx'
 import { type Recorder, useWriter } from './recorder.ts'
 import { ResumeCard } from './resume-card.tsx'
 import type { SheetRoute } from './sheet-route.ts'
-import { openAspects, soFarLine } from './so-far-line.ts'
+import { answersLeft, partLine } from './so-far-line.ts'
 import { StripSheets } from './strip-sheets.tsx'
 
 /** The recording screen: one walk as a strip map that grows upward from where you stand, and the keys to fill it. */
@@ -33,6 +35,7 @@ export function StripScreen(props: { session: Session; walk: string }) {
 }
 
 function Recording({ session, walk }: { session: Session; walk: Walk }) {
+  const { units } = choices.value
   const { query, route } = useLocation()
   const asked = useMemo(() => askedFor(walk, query.open), [walk.id])
   const [at, setAt] = useState<string>(asked.segment)
@@ -48,24 +51,23 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
 
   const judgement = session.judgement.value
   const results = judgement.walks.find((one) => one.id === walk.id)?.segments ?? []
-  const parts = stripParts(walk, judgement.stale ? [] : results)
-  const lineOf = (i: number) => {
-    const part = walk.segments[i]
-    return part
-      ? soFarLine(
-          part,
-          results.find((one) => one.id === part.id),
-          judgement.stale,
-        )
-      : ''
+  const parts = stripParts(walk, judgement.stale ? [] : results, units)
+  const { view } = session.survey.value
+  const resultOf = (id: string) => results.find((one) => one.id === id)
+  const line = partLine(segment, view, resultOf(segment.id), judgement.stale)
+  /** In the list: short, and never a verdict word while something is missing. */
+  const wordsOf = (part: Segment) => {
+    const left = answersLeft(part, view)
+    if (left > 0) return `${left} ${left === 1 ? 'answer' : 'answers'} left`
+    const result = judgement.stale ? undefined : resultOf(part.id)
+    return result ? verdictWord(result.verdict) : 'being judged'
   }
-  const result = results.find((one) => one.id === segment.id)
-  const complete = openAspects(segment).length === 0
   const [draftSeen, setDraftSeen] = useState(false)
   const half = draftSeen || trail.length > 0 ? null : placeOfDraft(walk, session.draft.value)
 
   const recorder: Recorder = {
     session,
+    units,
     walk,
     segment,
     index,
@@ -98,39 +100,30 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
               Part {index + 1} of {walk.segments.length}
             </h1>
             <p class="so-far">
-              <b>{lineOf(index)}</b>
-              {complete && result && <span> {result.sentence}</span>}
-              {!complete && (
-                <span class="soft">
-                  {' '}
-                  {openAspects(segment)
-                    .map((one) => one.replace('-', ' '))
-                    .join(', ')}
-                </span>
-              )}
+              <b>{line.text}</b> <span class={line.complete ? '' : 'soft'}>{line.detail}</span>
             </p>
           </header>
+          {half && session.draft.value && (
+            <ResumeCard
+              draft={session.draft.value}
+              part={half.index + 1}
+              name={half.name}
+              goOn={() => {
+                pick(half.index)
+                setTrail([half.route])
+              }}
+              drop={() => {
+                setDraftSeen(true)
+                void session.keepDraft(null)
+              }}
+            />
+          )}
           <StripMap parts={parts} current={index} pick={pick} />
         </div>
-        {half && session.draft.value && (
-          <ResumeCard
-            draft={session.draft.value}
-            part={half.index + 1}
-            name={half.name}
-            goOn={() => {
-              pick(half.index)
-              setTrail([half.route])
-            }}
-            drop={() => {
-              setDraftSeen(true)
-              void session.keepDraft(null)
-            }}
-          />
-        )}
         <PartList
           recorder={recorder}
           parts={parts}
-          verdictWords={lineOf}
+          words={wordsOf}
           pick={pick}
           openNext={async () => {
             const next = session.newId('segment')

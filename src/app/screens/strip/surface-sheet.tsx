@@ -22,7 +22,6 @@ export function SurfaceSheet(props: { recorder: Recorder; go(route: SheetRoute):
 
   return (
     <div class="sheet-keys">
-      <HowChips how={how} choose={setHow} />
       <Chips
         legend="Finish"
         choices={words('finish')}
@@ -51,6 +50,7 @@ export function SurfaceSheet(props: { recorder: Recorder; go(route: SheetRoute):
       >
         Pendulum value
       </button>
+      <HowChips how={how} choose={setHow} />
       {there.map((feature) => (
         <button
           key={feature.id}
@@ -58,7 +58,7 @@ export function SurfaceSheet(props: { recorder: Recorder; go(route: SheetRoute):
           class="key wide"
           onClick={() => props.go({ at: 'feature', feature: feature.id })}
         >
-          Change {featureWords(feature)}
+          Change {featureWords(feature, recorder.units)}
         </button>
       ))}
       <h3>Add what is there</h3>
