@@ -29,12 +29,14 @@ function asText(mark: string): string {
   return `[U+${(mark.codePointAt(0) ?? 0).toString(16).toUpperCase().padStart(4, '0')}]`
 }
 
+const letters = new Intl.Segmenter('en')
+
 /** Cut between letters as a reader sees them, never inside one. */
 function cut(text: string, most: number): string {
   if (text.length <= most) return text
   let kept = ''
   let count = 0
-  for (const { segment } of new Intl.Segmenter('en').segment(text.slice(0, most * 40))) {
+  for (const { segment } of letters.segment(text.slice(0, most * 40))) {
     if (count >= most - 1) break
     kept += segment
     count++

@@ -9,7 +9,7 @@ import { style } from './style.ts'
  */
 export function toHtml(outline: Outline): string {
   const wide = outline.sections.some(hasTable) ? ' class="wide"' : ''
-  return `<!doctype html>
+  return `<!DOCTYPE html>
 <html lang="${outline.lang}">
 <head>
 <meta charset="utf-8">
@@ -57,9 +57,9 @@ function blockHtml(block: Block): string {
       : `<ul>\n${block.items.map(({ text }) => `<li>${escapeIsolated(text)}</li>`).join('\n')}\n</ul>`
   const head = block.head.map((cell) => `<th scope="col">${escapeIsolated(cell)}</th>`).join('')
   const rows = block.rows.map((cells) => `<tr>${cells.map(cellHtml).join('')}</tr>`)
-  // A wide table scrolls on its own: the region can be reached by keyboard.
+  // A wide table scrolls on its own: the group can be reached by keyboard.
   return [
-    `<div class="table" role="region" tabindex="0" aria-label="${escapePlain(block.caption)}"><table>`,
+    `<div class="table" role="group" tabindex="0" aria-label="${escapePlain(block.caption)}"><table>`,
     `<caption>${escapeIsolated(block.caption)}</caption>`,
     `<thead><tr>${head}</tr></thead>`,
     `<tbody>\n${rows.join('\n')}\n</tbody></table></div>`,

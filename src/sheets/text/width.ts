@@ -1,9 +1,12 @@
 /** Columns that a text takes on a fixed-width screen: two for East Asian wide letters and emoji, none for marks. */
 export function columns(text: string): number {
+  if (/^[ -~]*$/.test(text)) return text.length
   let sum = 0
-  for (const { segment } of new Intl.Segmenter('en').segment(text)) sum += letterColumns(segment)
+  for (const { segment } of letters.segment(text)) sum += letterColumns(segment)
   return sum
 }
+
+const letters = new Intl.Segmenter('en')
 
 const none = /^[\p{M}\p{Cf}]+$/u
 const wide =
@@ -32,7 +35,7 @@ export function wrap(text: string, most: number): string[] {
       width += room + (width > 0 ? 1 : 0)
       continue
     }
-    for (const { segment } of new Intl.Segmenter('en').segment(word)) {
+    for (const { segment } of letters.segment(word)) {
       const letter = letterColumns(segment)
       if (width + letter > most) close()
       line += segment
