@@ -21,10 +21,7 @@ const tape = '#F2C230'
 /** Faces by the names under which they are registered. */
 export const face = { text: 'text', bold: 'bold' } as const
 
-/**
- * A new page where `height` more points would run into the foot of this one. Never within a marked piece of content: its
- * end would stand on another page than its beginning.
- */
+/** A new page where `height` more points would run into the foot of this one. True where there is one. */
 export function makeRoom(doc: PDFDocument, height: number): boolean {
   if (doc.y + height <= doc.page.height - margins.bottom || doc.y <= margins.top) return false
   doc.continueOnNewPage()
