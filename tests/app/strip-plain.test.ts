@@ -110,7 +110,7 @@ describe('what is left', () => {
     const old = { verdict: 'usable', sentence: 'Width governs.' } as SegmentResult
     const line = partLine(one, view(one), old, false)
     expect(line.text).toBe('So far: nothing against it; 11 answers left')
-    expect(line.detail).toMatch(/and 7 more$/)
+    expect(line.detail).toMatch(/and 8 more$/)
     expect(`${line.text} ${line.detail}`).not.toMatch(/usable|cautions|with help|do not use|not known/)
   })
 

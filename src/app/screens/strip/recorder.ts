@@ -62,6 +62,8 @@ export function useWriter(session: Session) {
   return {
     said,
     say: (text: string) => setSaid({ text, failed: false }),
+    /** What was said belongs to the sheet before. */
+    hush: () => setSaid(null),
     write,
     undo: () => step(() => session.undo(), 'Undone'),
     redo: () => step(() => session.redo(), 'Done again'),

@@ -25,9 +25,10 @@ export function partLine(
   if (left.length > 0) {
     const answers = `${left.length} ${left.length === 1 ? 'answer' : 'answers'} left`
     return {
-      text: now.against
-        ? `So far against it: ${now.against.sentence} ${answers}`
-        : `So far: nothing against it; ${answers}`,
+      text:
+        now.against && isSeen(now.against)
+          ? `So far against it: ${now.against.sentence} ${answers}`
+          : `So far: nothing against it; ${answers}`,
       detail: someOf(left.map((one) => one.name)),
       complete: false,
     }
@@ -65,7 +66,7 @@ function again(segment: Segment): Missing[] {
     .map((item) => ({ holder: segment.id, item, name: `${item.replace('-', ' ')} again` }))
 }
 
-const mostNamed = 4
+const mostNamed = 3
 
 function someOf(names: readonly string[]): string {
   const shown = names.slice(0, mostNamed).join(', ')

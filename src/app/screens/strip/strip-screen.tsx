@@ -49,10 +49,16 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
   const segment = walk.segments[index]
   if (!segment) throw new Error('strip/no-part')
 
-  const judgement = session.judgement.value
-  const results = judgement.walks.find((one) => one.id === walk.id)?.segments ?? []
-  const parts = stripParts(walk, judgement.stale ? [] : results, units)
   const { view } = session.survey.value
+  const judgement = session.judgement.value
+  /** No verdict on the map while an answer is missing. */
+  const isWhole = ({ id }: { id: string }) => walk.segments.some((one) => one.id === id && answersLeft(one, view) === 0)
+  const open = (route: SheetRoute) => {
+    writer.hush()
+    setTrail([route])
+  }
+  const results = judgement.walks.find((one) => one.id === walk.id)?.segments ?? []
+  const parts = stripParts(walk, judgement.stale ? [] : results.filter(isWhole), units)
   const resultOf = (id: string) => results.find((one) => one.id === id)
   const line = partLine(segment, view, resultOf(segment.id), judgement.stale)
   /** In the list: short, and never a verdict word while something is missing. */
@@ -130,7 +136,7 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
             const label = `part ${walk.segments.length + 1} is open`
             if (await writer.write((log) => addSegment(log, walk.id, nextPart(next)), label)) setAt(next)
           }}
-          go={(route) => setTrail([route])}
+          go={open}
         />
       </main>
       <footer class="strip-foot">
@@ -140,7 +146,7 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
         </p>
         <Keys
           segment={segment.id}
-          go={(route) => setTrail([route])}
+          go={open}
           undo={{ label: session.undoLabel.value, press: () => void writer.undo() }}
           redo={{ label: session.redoLabel.value, press: () => void writer.redo() }}
           leave={() => route(`/venue/${session.survey.value.survey}/walk/${walk.id}/leave`)}
