@@ -13,7 +13,7 @@ export function VerdictMark(props: { verdict: Verdict; detail?: string | null; l
       <VerdictSwatch verdict={verdict} />
       <span>
         {verdictWord(verdict)}
-        {detail ? `: ${detail}` : ''}
+        {detail && <span class="detail">: {detail}</span>}
       </span>
     </span>
   )

@@ -1,4 +1,4 @@
-import { type Verdict, verdicts } from '../../judge/result.ts'
+import type { Verdict } from '../../judge/result.ts'
 
 const words: Record<Verdict, string> = {
   usable: 'usable',
@@ -11,12 +11,4 @@ const words: Record<Verdict, string> = {
 /** The five words, the same everywhere. */
 export function verdictWord(verdict: Verdict): string {
   return words[verdict]
-}
-
-/** The worst of several; null for none. The order of the list of verdicts is from best to worst, not known last. */
-export function worstVerdict(all: readonly Verdict[]): Verdict | null {
-  return all.reduce<Verdict | null>(
-    (worst, one) => (worst === null || verdicts.indexOf(one) > verdicts.indexOf(worst) ? one : worst),
-    null,
-  )
 }

@@ -42,6 +42,26 @@ export async function takeInFile(text: string): Promise<Begun> {
   return { ok: true, survey: file.survey.survey, name: file.survey.view.name }
 }
 
+/** The last file made of a survey: when, and how many entries were in it. */
+export interface Copy {
+  at: string
+  facts: number
+}
+
+const copyKey = (survey: string) => `copy ${survey}`
+
+/** Remembers that a file was made of a survey. */
+export async function copyMade(survey: string, facts: number): Promise<void> {
+  const copy: Copy = { at: new Date().toISOString(), facts }
+  await (await phoneStore()).changeSettings({ [copyKey(survey)]: copy })
+}
+
+/** Null: no file was ever made of it on this phone. */
+export async function lastCopy(survey: string): Promise<Copy | null> {
+  const copy = (await (await phoneStore()).settings())[copyKey(survey)] as Partial<Copy> | undefined
+  return typeof copy?.at === 'string' && typeof copy.facts === 'number' ? { at: copy.at, facts: copy.facts } : null
+}
+
 /** A survey as a file, everything kept. */
 export async function surveyFile(survey: string): Promise<{ text: string; facts: number }> {
   const log = await (await phoneStore()).openSurvey(survey)

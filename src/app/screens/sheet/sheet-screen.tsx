@@ -1,13 +1,95 @@
+import './sheet.css'
+import { useState } from 'preact/hooks'
+import { outline } from '../../../sheets/content/outline.ts'
+import type { Outline, Reader, Refusal } from '../../../sheets/content/tree.ts'
 import { PageHead } from '../../components/page-head.tsx'
+import { StatusLine } from '../../components/status-line.tsx'
+import { Chips } from '../../components/strip/chips.tsx'
 import type { Session } from '../../state/session.ts'
+import { today } from '../../state/today.ts'
+import { type SheetForm, SheetPreview } from './sheet-preview.tsx'
 
-export function SheetScreen({ session, walk }: { session: Session; walk: string }) {
+const readers: readonly { value: Reader; label: string }[] = [
+  { value: 'client', label: 'Client' },
+  { value: 'venue', label: 'Venue manager' },
+  { value: 'file', label: 'Handler’s file' },
+  { value: 'reception', label: 'Reception' },
+]
+
+/** The sheets of one walk: who reads it, in which form, what it says, and out of the app with it. */
+export function SheetScreen({ session, walk: id }: { session: Session; walk: string }) {
+  const [reader, setReader] = useState<Reader>('client')
+  const [form, setForm] = useState<SheetForm>('html')
+  const [said, setSaid] = useState('')
+  const survey = session.survey.value
+  const judgement = session.judgement.value
+  const name = survey.view.walks.find((one) => one.id === id)?.name ?? 'Walk'
+  const result = judgement.walks.find((one) => one.id === id)
+  const assessment = judgement.assessment
+  const written: Outline | Refusal | null =
+    judgement.stale || !assessment || !result ? null : outline(survey, result, assessment, reader, { on: today() })
+
   return (
-    <main class="page">
-      <PageHead
-        title={walk}
-        back={{ href: `/venue/${session.survey.value.survey}`, label: session.survey.value.view.name }}
-      />
+    <main class="page wide">
+      <PageHead title={`Sheet: ${name}`} back={{ href: `/venue/${survey.survey}`, label: survey.view.name }} />
+      <StatusLine text={said} />
+      <div class="columns sheet-columns">
+        <div class="stack">
+          <Chips legend="For" choices={readers} chosen={reader} choose={(one) => setReader(one as Reader)} />
+          <Chips
+            legend="As"
+            choices={[
+              { value: 'html', label: 'Page' },
+              { value: 'text', label: 'Plain text' },
+            ]}
+            chosen={form}
+            choose={(one) => setForm(one as SheetForm)}
+          />
+          <p class="soft">
+            A sheet names the client’s measurements or your readings. Hand it only to the person it is for.
+          </p>
+        </div>
+        {judgement.problem ? (
+          <p class="trouble" role="alert">
+            {judgement.problem}
+          </p>
+        ) : written === null ? (
+          <p role="status">Judging first</p>
+        ) : written.kind === 'refusal' ? (
+          <NoSheet refusal={written} address={`/venue/${survey.survey}`} />
+        ) : (
+          <SheetPreview outline={written} form={form} file={`${name} ${reader}`} say={setSaid} />
+        )}
+      </div>
     </main>
   )
+}
+
+/** Why there is none, and what would change that. */
+function NoSheet({ refusal, address }: { refusal: Refusal; address: string }) {
+  return (
+    <section class="stack" aria-labelledby="none">
+      <h2 id="none">No sheet yet</h2>
+      <p>{sentence(refusal.why)}</p>
+      {refusal.missing.length > 0 && (
+        <>
+          <p>Missing:</p>
+          <ul class="plain-list">
+            {refusal.missing.map((one) => (
+              <li key={one}>{one}</li>
+            ))}
+          </ul>
+        </>
+      )}
+      <p>{sentence(refusal.whatToDo)}</p>
+      <p>
+        <a href={address}>Marks of this walk are made on the venue’s page.</a>
+      </p>
+    </section>
+  )
+}
+
+function sentence(text: string): string {
+  const begun = text.charAt(0).toUpperCase() + text.slice(1)
+  return /[.!?]$/.test(begun) ? begun : `${begun}.`
 }

@@ -1,16 +1,19 @@
 import { useEffect, useState } from 'preact/hooks'
+import { worstVerdict } from '../../../judge/worst.ts'
+import { allFacts } from '../../../record/log.ts'
 import { dayAndHour } from '../../components/day-words.ts'
 import { VerdictMark } from '../../components/verdict-mark.tsx'
-import { worstVerdict } from '../../components/verdict-word.ts'
 import { openSession } from '../../state/open-session.ts'
 import type { Session } from '../../state/session.ts'
-import type { OnPhone } from '../../state/surveys.ts'
+import { type Copy, lastCopy, type OnPhone } from '../../state/surveys.ts'
 
 /** One venue: its worst verdict, when it was last changed. */
 export function VenueRow({ row }: { row: OnPhone }) {
   const [session, setSession] = useState<Session | null>(null)
+  const [copy, setCopy] = useState<Copy | null>(null)
   useEffect(() => {
     void openSession(row.survey).then(setSession)
+    void lastCopy(row.survey).then(setCopy)
   }, [row.survey])
 
   const walks = session?.survey.value.view.walks.length ?? null
@@ -23,6 +26,9 @@ export function VenueRow({ row }: { row: OnPhone }) {
       <p class="soft">
         {walks === null ? '' : `${walks === 1 ? '1 walk' : `${walks} walks`} · `}last entry {dayAndHour(row.changed)}
       </p>
+      {session && !session.survey.value.view.demo && (
+        <p class="soft">{waiting(allFacts(session.log()).length, copy)}</p>
+      )}
     </li>
   )
 }
@@ -34,9 +40,24 @@ function Worst({ session }: { session: Session }) {
   if (judgement.stale) return <p class="soft">Judging</p>
   const worst = worstVerdict(judgement.walks.map((walk) => walk.verdict))
   const at = judgement.walks.find((walk) => walk.verdict === worst)
-  return worst && at ? (
-    <p>
-      <VerdictMark verdict={worst} /> <span class="soft">{at.name}</span>
-    </p>
+  return at ? (
+    <div>
+      <p>
+        <VerdictMark verdict={worst} />
+      </p>
+      <p class="soft">
+        {judgement.walks.length > 1 ? 'the worst of them: ' : ''}
+        {at.name}
+      </p>
+    </div>
   ) : null
+}
+
+/** What would be lost with this phone. */
+function waiting(facts: number, copy: Copy | null): string {
+  if (!copy) return `Only on this phone: no file made of it yet, ${facts} entries wait.`
+  const newer = facts - copy.facts
+  return newer <= 0
+    ? `All of it is in the file of ${dayAndHour(copy.at)}.`
+    : `${newer} entries since the file of ${dayAndHour(copy.at)} are only on this phone.`
 }

@@ -1,0 +1,111 @@
+import { useState } from 'preact/hooks'
+import { addZone, setZoneField, setZoneWord } from '../../../record/operations/venue.ts'
+import type { SurveyView, Zone } from '../../../record/survey.ts'
+import { Adder } from '../../components/adder.tsx'
+import { AnswerField } from '../../components/answer-field.tsx'
+import { AllowedForm } from './allowed-form.tsx'
+import { type HowKnown, HowKnownChips } from './how-known.tsx'
+import { Observations } from './observations.tsx'
+import { answerNow, type Writer } from './writer.ts'
+
+const items = [
+  {
+    item: 'signal',
+    label: 'Phone signal',
+    words: [
+      { value: 'yes', label: 'yes' },
+      { value: 'none', label: 'none' },
+    ],
+  },
+  {
+    item: 'mopped',
+    label: 'Floor mopped in the hours judged',
+    words: [
+      { value: 'no', label: 'no' },
+      { value: 'yes', label: 'yes' },
+    ],
+  },
+  {
+    item: 'magnet',
+    label: 'Strong magnet near (robot forbidden)',
+    words: [
+      { value: 'no', label: 'no' },
+      { value: 'yes', label: 'yes' },
+    ],
+  },
+] as const
+
+/** Parts of the venue with their surroundings at an hour, and who allows the robot. */
+export function Zones({ writer, view }: { writer: Writer; view: SurveyView }) {
+  return (
+    <div class="stack">
+      {view.zones.length === 0 && <p>No zone yet. A walk without one has no answer for crowd, noise and permission.</p>}
+      {view.zones.map((zone) => (
+        <details key={zone.id}>
+          <summary>
+            {zone.name}: robot {allowedWords(zone)}
+          </summary>
+          <ZoneForm writer={writer} zone={zone} />
+        </details>
+      ))}
+      <Adder
+        label="Name of another zone"
+        keyWord="Add the zone"
+        add={(name) => writer.write((log) => addZone(log, { id: writer.session.newId('zone'), name }), `zone ${name}`)}
+      />
+    </div>
+  )
+}
+
+function allowedWords(zone: Zone): string {
+  const says = zone.words.allowed?.says
+  return says === undefined || says === 'not-asked' ? 'not asked for' : says
+}
+
+function ZoneForm({ writer, zone }: { writer: Writer; zone: Zone }) {
+  const [how, setHow] = useState<HowKnown | null>(null)
+  const save = (item: string, label: string, says: string) => {
+    if (!how) return writer.say(`Not saved: first say how you know, then answer “${label}” again.`)
+    void writer.write(
+      (log) => setZoneWord(log, zone.id, item, answerNow(writer, says, how)),
+      `${zone.name}, ${label}: ${says}`,
+    )
+  }
+  return (
+    <div class="stack">
+      <AllowedForm writer={writer} zone={zone} />
+      <Tick
+        label="Outdoors"
+        on={zone.outdoors === true}
+        set={(on) => void writer.write((log) => setZoneField(log, zone.id, 'outdoors', on), `${zone.name}: outdoors`)}
+      />
+      <Tick
+        label="An outside door is within 10 m"
+        on={zone.nearOutsideDoor === true}
+        set={(on) =>
+          void writer.write((log) => setZoneField(log, zone.id, 'nearOutsideDoor', on), `${zone.name}: outside door`)
+        }
+      />
+      <HowKnownChips chosen={how} choose={setHow} />
+      {items.map(({ item, label, words }) => (
+        <AnswerField
+          key={item}
+          label={label}
+          words={words}
+          answer={zone.words[item]}
+          save={(says) => save(item, label, says)}
+        />
+      ))}
+      <Observations writer={writer} zone={zone} />
+    </div>
+  )
+}
+
+function Tick(props: { label: string; on: boolean; set(on: boolean): void }) {
+  return (
+    <label class="tick-row">
+      <input type="checkbox" checked={props.on} onChange={(event) => props.set(event.currentTarget.checked)} />
+      <span>{props.label}</span>
+    </label>
+  )
+}
