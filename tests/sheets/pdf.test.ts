@@ -5,7 +5,7 @@ import { join } from 'node:path'
 import { inflateSync } from 'node:zlib'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { own, ownWhole } from '../../src/sheets/content/own.ts'
-import type { Outline, Section } from '../../src/sheets/content/tree.ts'
+import type { Block, Outline, Section } from '../../src/sheets/content/tree.ts'
 import { toPdf } from '../../src/sheets/pdf/to-pdf.ts'
 import { hostile } from '../fixtures/sheets/hostile.ts'
 import { clientSheet, sentencesOf, sheetOf, venueSheet } from '../fixtures/sheets/outlines.ts'
@@ -232,7 +232,7 @@ describe('lists, tables and pictures', () => {
     for (const shift of [0, 3, 7, 11]) {
       const sheet = structuredClone(clientSheet)
       const lines = Array.from({ length: shift }, (_, i) => ({ text: `Line ${i}` }))
-      const table = { kind: 'table', caption: 'Long and short', head: ['Where', 'What'], rows } as const
+      const table: Block = { kind: 'table', caption: 'Long and short', head: ['Where', 'What'], rows }
       sheet.sections = [{ heading: 'Readings', blocks: [{ kind: 'list', items: lines }, table, table], sections: [] }]
       const path = await write(sheet)
       expect(structure(path).filter(({ type }) => type === 'TR')).toHaveLength(62)
