@@ -2,7 +2,7 @@ import { readFileSync } from 'node:fs'
 import { describe, expect, test } from 'vitest'
 import { featureWords, stripParts, turnWords, widthOf } from '../../src/app/components/strip/strip-words.ts'
 import { unitsOffered } from '../../src/app/components/strip/units-offered.ts'
-import { checkCopy, copyName } from '../../src/app/screens/leaving/copy-check.ts'
+import { checkCopy } from '../../src/app/screens/leaving/copy-check.ts'
 import { unfinished } from '../../src/app/screens/leaving/unfinished.ts'
 import { askedFor } from '../../src/app/screens/strip/asked-for.ts'
 import { placeOfDraft } from '../../src/app/screens/strip/draft-route.ts'
@@ -182,11 +182,5 @@ describe('before you leave', () => {
     expect(checkCopy(less.join('\n'), log).ok).toBe(false)
     expect(checkCopy(text.replace('1.62 m', '1.63 m'), log).ok).toBe(false)
     expect(checkCopy(text.slice(0, text.length / 2), log).ok).toBe(false)
-  })
-
-  test('its name sorts by venue and time', () => {
-    expect(copyName('Fennel Lane Clinic (invented)', new Date('2026-11-30T09:05:00Z'))).toBe(
-      'fennel-lane-clinic-invented-2026-11-30-09-05.json',
-    )
   })
 })

@@ -24,12 +24,3 @@ export function checkCopy(text: string, log: FactLog): CopyCheck {
     }
   return { ok: true, facts: allFacts(log).length }
 }
-
-/** A file name that sorts: venue, day, time. */
-export function copyName(venue: string, now: Date): string {
-  const plain = venue
-    .toLowerCase()
-    .replace(/[^a-z0-9]+/g, '-')
-    .replace(/^-|-$/g, '')
-  return `${plain || 'survey'}-${now.toISOString().slice(0, 16).replace(/[:T]/g, '-')}.json`
-}

@@ -8,10 +8,10 @@ import { PageHead } from '../../components/page-head.tsx'
 import { StatusLine } from '../../components/status-line.tsx'
 import { TapeProgress } from '../../components/tape-rule.tsx'
 import { textOf } from '../../state/file-choice.ts'
+import { fileName, saveFile, shareFile, sharesFiles, type TextFile } from '../../state/hand-over.ts'
 import type { Session } from '../../state/session.ts'
 import { useWriter } from '../strip/recorder.ts'
-import { checkCopy, copyName } from './copy-check.ts'
-import { handOver } from './hand-over.ts'
+import { checkCopy } from './copy-check.ts'
 import { unfinished } from './unfinished.ts'
 
 const harmWords = {
@@ -155,21 +155,32 @@ function Copy({ session }: { session: Session }) {
         : { text: `${checked.what} ${checked.whatToDo}`, failed: true },
     )
   }
-  const make = async () => {
+  const make = async (hand: (file: TextFile) => Promise<boolean>) => {
     const text = writeSurveyFile(session.log())
-    const handed = await handOver(copyName(session.survey.value.view.name, new Date()), text)
-    if (handed === 'stopped') return setSaid({ text: 'No copy was made. Make it before you leave.', failed: true })
+    const now = new Date().toISOString().slice(0, 16).replace(/[:T]/g, '-')
+    const name = fileName(session.survey.value.view.name, 'json', now)
+    if (!(await hand({ name, type: 'application/json', text })))
+      return setSaid({ text: 'No copy was made. Make it before you leave.', failed: true })
     setMade(true)
     check(text, (facts) => `Ready to leave: copy checked. ${facts} entries written and read back the same.`)
+  }
+  const save = async (file: TextFile) => {
+    saveFile(file)
+    return true
   }
 
   return (
     <section class="part" aria-labelledby="copy-title">
       <h2 id="copy-title">The copy</h2>
       <p class="soft">A file with every entry. A phone can be lost: send it, or keep it elsewhere.</p>
-      <button type="button" class="key primary wide" onClick={() => void make()}>
+      <button type="button" class="key primary wide" onClick={() => void make(save)}>
         Make the copy
       </button>
+      {sharesFiles() && (
+        <button type="button" class="key wide" onClick={() => void make(shareFile)}>
+          Send the copy
+        </button>
+      )}
       <StatusLine text={said.text} failed={said.failed} />
       {made && (
         <>
