@@ -1,6 +1,8 @@
 import type PDFDocument from 'pdfkit'
-import type { Verdict } from '../../judge/result.ts'
+import type { Block } from '../content/tree.ts'
 import { ink } from './paper.ts'
+
+type Verdict = Extract<Block, { kind: 'verdict' }>['verdict']
 
 /** What a shape is called where it cannot be seen. */
 export const shapeWords: Readonly<Record<Verdict, string>> = {
