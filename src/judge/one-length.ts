@@ -79,19 +79,18 @@ export function lengthsOf(
 }
 
 function bestOf(segments: readonly Judged[], lengths: readonly Metres[]): Metres {
-  const ranked = lengths.map((leash) => {
-    const worst: number[] = []
-    let rank = 0
-    for (const one of segments) {
-      const alone = restrict(one, leash)
-      const pair = ownPair(alone)
-      if (!pair) continue
-      rank = Math.max(rank, verdictRank(verdictAt(alone, pair)))
-      worst.push(...pair.worst())
-    }
-    return { leash, rank, worst: worst.sort((a, b) => b - a) }
+  const at = lengths.map((leash) => {
+    const pairs = segments.map((one) => ({ alone: restrict(one, leash), pair: ownPair(restrict(one, leash)) }))
+    return { leash, pairs, rank: Math.max(0, ...pairs.map(({ alone, pair }) => verdictRank(verdictAt(alone, pair)))) }
   })
-  ranked.sort((a, b) => a.rank - b.rank || lexicographic(a.worst, b.worst) || a.leash - b.leash)
+  const least = Math.min(...at.map((one) => one.rank))
+  const ranked = at
+    .filter((one) => one.rank === least)
+    .map(({ leash, pairs }) => ({
+      leash,
+      worst: pairs.flatMap(({ pair }) => pair?.worst() ?? []).sort((a, b) => b - a),
+    }))
+    .sort((a, b) => lexicographic(a.worst, b.worst) || a.leash - b.leash)
   const best = ranked[0]
   if (!best) throw new Error('judge/no-length: none was asked for')
   return best.leash

@@ -3,6 +3,7 @@ import type { Bodies, ClearanceAnswer, Motion, Planner } from '../leash/answer.t
 import type { Dimension, OwnScene, Pinch } from '../plan/pinches.ts'
 import { buildScene, reverseForm } from '../plan/scenes.ts'
 import type { Metres } from '../units/quantity.ts'
+import type { StopsReckoned } from './checks/stop.ts'
 import type { Grid } from './window.ts'
 
 /** Room a side at a pinch: [certified, optimistic]. Null: no motion at that end. */
@@ -31,6 +32,8 @@ export interface RoomSolver {
   room(pinch: Pinch, separations: readonly Metres[], ask: Ask): Room
   /** Windows of segments that nothing but reaction and slope tells apart, by those. */
   grids: Map<string, Grid>
+  /** Stops already reckoned. */
+  stops: StopsReckoned
 }
 
 export interface Ask {
@@ -63,6 +66,7 @@ export function roomSolver(planner: Planner, bodies: Bodies): RoomSolver {
 
   return {
     grids: new Map(),
+    stops: new Map(),
     room(pinch, separations, ask) {
       let low: Room = { low: Number.POSITIVE_INFINITY, high: null, pauses: 0, nearest: null }
       let most: Metres | null = null

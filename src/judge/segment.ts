@@ -35,6 +35,8 @@ export interface Judged {
   /** The best that the checks without leash and pace leave. */
   floor: Verdict
   choice: Choice | null
+  /** The same with one length alone on offer, as asked for. */
+  alone: Map<Metres, Judged>
 }
 
 /** @param nominal the same segment's checks before one of its readings was narrowed. */
@@ -53,7 +55,17 @@ export function judgeSite(site: Site, rooms: RoomSolver, nominal?: readonly Pair
   const pairs = site.led ? pairChecks(site, pinches.filter(isPinch), rooms, nominal ? { nominal } : {}) : []
   const grid = site.led ? gridFor(site, pairs, rooms) : noGrid
   const floor = floorOf(site, plain, gaps, rows)
-  return { site, plain, pairs, gaps, cautioned: rows, grid, floor, choice: choose(grid, stepOf(floor)) }
+  return {
+    site,
+    plain,
+    pairs,
+    gaps,
+    cautioned: rows,
+    grid,
+    floor,
+    choice: choose(grid, stepOf(floor)),
+    alone: new Map(),
+  }
 }
 
 /** Checks that depend on leash or pace, of a venue as it is or with one pinch made wider. */
@@ -64,7 +76,7 @@ export function pairChecks(
   variant: Variant = {},
 ): PairCheck[] {
   return [
-    stop(site),
+    stop(site, rooms.stops),
     ...stopAtEdge(site),
     ...turns(site, pinches, rooms, variant),
     ...doorTime(site),
@@ -130,7 +142,11 @@ export function ownPair({ choice, grid, only }: Judged): Pair | null {
 
 /** A judged segment as if one length alone were on offer. */
 export function restrict(judged: Judged, leash: Metres): Judged {
-  return { ...judged, only: leash, choice: choose(judged.grid, stepOf(judged.floor), leash) }
+  const before = judged.alone.get(leash)
+  if (before) return before
+  const alone = { ...judged, only: leash, choice: choose(judged.grid, stepOf(judged.floor), leash) }
+  judged.alone.set(leash, alone)
+  return alone
 }
 
 /** Where a pair is asked for by its length and pace alone. */

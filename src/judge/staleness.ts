@@ -1,6 +1,7 @@
 import { kind } from '../catalogue/kinds.ts'
 import type { Item } from '../record/answers.ts'
 import type { Gap } from './gap.ts'
+import type { Harm } from './result.ts'
 import { featuresOf, nameOf, type Site } from './site.ts'
 
 /** Days after which an answer in words no longer holds; levels and structure a year, doors, mats and planting half. */
@@ -24,44 +25,44 @@ const peopleDays = 60
 export function stale(site: Site): Gap[] {
   const { segment, setting, zone, led } = site
   const found: Gap[] = []
-  const look = (time: string | undefined, days: number, text: string, harm: Gap['harm'], readings: string[] = []) => {
-    if (time === undefined || daysBetween(time.slice(0, 10), setting.on) <= days) return
-    found.push({
-      kind: 'stale',
-      text: `${text} is of ${time.slice(0, 10)}: too long ago.`,
-      readings,
-      blocks: true,
-      ...(harm ? { harm } : {}),
-    })
+  const look = (time: string | undefined, days: number, what: () => string, harm: Harm, readings: string[] = []) => {
+    if (time === undefined || time.slice(0, 10) >= firstFresh(setting.on, days)) return
+    const text = `${what()} is of ${time.slice(0, 10)}: too long ago.`
+    found.push({ kind: 'stale', text, readings, harm, blocks: true })
   }
-  for (const [item, answer] of Object.entries(segment.words)) {
+  // A floor found wet was wet that day: it is judged dry too, with its condition, so only what lasts ages here.
+  for (const item of Object.keys(segment.words)) {
     const days = itemDays[item as Item]
-    if (days !== undefined) look(answer.time, days, `${segment.name}: ${item}`, 'fall')
+    if (days !== undefined) look(segment.words[item]?.time, days, () => `${segment.name}: ${item}`, 'fall')
   }
-  // A floor found wet was wet that day; what dries is judged dry with its condition, so only width and levels age here.
-  for (const [quantity, readings] of Object.entries(segment.readings))
-    for (const one of readings) look(one.time, structureDays, `${segment.name}: ${quantity}`, 'trap', [one.id])
+  for (const quantity of Object.keys(segment.readings))
+    for (const one of segment.readings[quantity] ?? [])
+      look(one.time, structureDays, () => `${segment.name}: ${quantity}`, 'trap', [one.id])
   for (const feature of featuresOf(site)) {
     const row = kind(feature.kind)
     if (!row) continue
-    const name = nameOf(feature)
+    const what = (attribute: string) => () => `${nameOf(feature)}: ${attribute}`
     for (const [attribute, answer] of Object.entries(feature.words))
-      look(answer.time, row.staleDays, `${name}: ${attribute}`, row.harm)
+      look(answer.time, row.staleDays, what(attribute), row.harm)
     for (const [attribute, readings] of Object.entries(feature.readings))
-      for (const one of readings) look(one.time, row.staleDays, `${name}: ${attribute}`, row.harm, [one.id])
+      for (const one of readings) look(one.time, row.staleDays, what(attribute), row.harm, [one.id])
   }
   if (!led || !zone) return found
   for (const one of zone.observations)
-    for (const item of ['crowd', 'noise']) look(one.words[item]?.time, peopleDays, `${zone.name}: ${item}`, 'road')
+    for (const item of ['crowd', 'noise'])
+      look(one.words[item]?.time, peopleDays, () => `${zone.name}: ${item}`, 'road')
   return found
 }
 
-/** Whole days from one ISO date to another. */
-export function daysBetween(from: string, to: string): number {
-  return Math.round((dayNumber(to) - dayNumber(from)) / 86_400_000)
-}
+const known = new Map<string, string>()
 
-function dayNumber(iso: string): number {
-  const [year = 0, month = 1, day = 1] = iso.split('-').map(Number)
-  return Date.UTC(year, month - 1, day)
+/** The first ISO date that is no more than `days` before `on`. */
+function firstFresh(on: string, days: number): string {
+  const key = `${on} ${days}`
+  const before = known.get(key)
+  if (before !== undefined) return before
+  const [year = 0, month = 1, day = 1] = on.split('-').map(Number)
+  const first = new Date(Date.UTC(year, month - 1, day - days)).toISOString().slice(0, 10)
+  known.set(key, first)
+  return first
 }

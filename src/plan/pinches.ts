@@ -305,10 +305,11 @@ function ofDeadEnd(site: PinchSite, feature: Feature): Pinch | Lacking {
     free: {},
     from: [clear, depth],
     offLow: 0,
-    build:
-      ({ w = 0, e = 0 }) =>
-      (separation) =>
-        deadEndScene({ w, e }, team, separation),
+    build: ({ w = 0, e = 0 }) => ({
+      kind: 'own',
+      key: `dead end ${w} ${e}`,
+      draw: (separation) => deadEndScene({ w, e }, team, separation),
+    }),
   }
 }
 

@@ -48,10 +48,15 @@ export function uncertainty(reading: Pick<Reading, 'instrument' | 'value'>, chan
 
 /** The joined interval, or null where there is no reading that counts. A value that is no number breaks a promise: throws. */
 export function interval(readings: readonly Reading[] | undefined, options: IntervalOptions): Interval | null {
+  const [only] = readings ?? []
+  if (only && readings?.length === 1) {
+    refuseNaN(only)
+    return single(only, options)
+  }
   const settled = new Set((readings ?? []).flatMap((one) => (isAct(one) ? one.settles.readings : [])))
   const places: Reading[][] = []
   for (const one of readings ?? []) {
-    if (Number.isNaN(one.value)) throw new Error(`record/no-number: reading ${one.id}`)
+    refuseNaN(one)
     const here = places.at(-1)
     if (here && one.place !== 'another') here.push(one)
     else places.push([one])
@@ -62,6 +67,10 @@ export function interval(readings: readonly Reading[] | undefined, options: Inte
     .map((place) => joined(place, options))
   if (counted.length === 0) return null
   return counted.reduce((worst, next) => worse(worst, next, options.unsafe))
+}
+
+function refuseNaN(one: Reading): void {
+  if (Number.isNaN(one.value)) throw new Error(`record/no-number: reading ${one.id}`)
 }
 
 /** A reading replaces others only by a named person's act with a reason. */
@@ -90,6 +99,8 @@ function span(one: Reading, { unsafe, changed, pins }: IntervalOptions): Span {
 
 /** One place: every reading there, whoever took it. */
 function joined(place: readonly Reading[], options: IntervalOptions): Interval {
+  const [only] = place
+  if (only && place.length === 1) return single(only, options)
   const spans = place.map((one) => ({ one, at: span(one, options) }))
   // Whether people differ is a matter of record: a pinned reading is compared as it was taken.
   const taken = options.pins ? place.map((one) => ({ one, at: span(one, { ...options, pins: undefined }) })) : spans
@@ -120,6 +131,13 @@ function joined(place: readonly Reading[], options: IntervalOptions): Interval {
     tooQuick: place.some((one) => one.tooQuick === true),
     ids: place.map((one) => one.id),
   }
+}
+
+function single(one: Reading, options: IntervalOptions): Interval {
+  const { low, value, high } = span(one, options)
+  const told = instrument(one.instrument)?.hearsay ?? !instrument(one.instrument)
+  const tooQuick = one.tooQuick === true
+  return { low, value, high, ...ends(low, high, options.unsafe), differs: false, told, tooQuick, ids: [one.id] }
 }
 
 /** Beyond the root of the sum of squares two readings of one place differ; two bounds never do. */

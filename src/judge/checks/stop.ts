@@ -6,6 +6,9 @@ import type { PairCheck, Reckoned } from './pair-check.ts'
 
 const gravity = 9.81
 
+/** Stops reckoned in a run, by reaction and slope, then by length and pace. */
+export type StopsReckoned = Map<string, Map<number, Reckoned>>
+
 /** Distance a handler still walks after the robot stopped dead; infinite where a downward slope outruns the braking. */
 export function stopDistance(pace: number, reaction: number, deceleration: number, down: number): number {
   const braking = deceleration - gravity * Math.sin(Math.atan(down))
@@ -16,13 +19,26 @@ export function stopDistance(pace: number, reaction: number, deceleration: numbe
  * The robot stops dead; the handler reacts, brakes and must not walk into it: v t_r + v^2 / (2 (a_h - g sin down)) and
  * the planned slack, for the separation less half the robot before the attachment and the handler's front. A measured
  * braking adds the robot's own run-out, as far as the gap is never less on the way.
+ * @param known figures of other segments of the run: they depend on reaction, slope, length and pace alone.
  */
-export function stop(site: Site): PairCheck {
+export function stop(site: Site, known: StopsReckoned): PairCheck {
   const { setting, segment, slope } = site
   const { team } = setting
   const { robot, handler, leash: limits } = team.card
   const { a, d } = team.bodies
+  const key = `${site.reaction} ${slope.down} ${slope.steepest}`
+  const here = known.get(key) ?? new Map<number, Reckoned>()
+  known.set(key, here)
   const reckon = (leash: number, pace: number): Reckoned => {
+    // Leash in whole millimetres beside the pace: one number for both.
+    const at = Math.round(leash * 1000) * 100 + pace
+    const before = here.get(at)
+    if (before) return before
+    const made = reckoned(leash, pace)
+    here.set(at, made)
+    return made
+  }
+  const reckoned = (leash: number, pace: number): Reckoned => {
     const walked = stopDistance(pace, site.reaction, handler.deceleration, slope.down)
     const demand = walked + limits.plannedSlack
     const separation = leastSeparation(team, leash, slope.steepest) ?? 0
