@@ -45,14 +45,22 @@ export const rooms = {
     may: ['sheets/content', 'units', 'geometry', 'record', 'catalogue', 'plan', 'judge'],
     instead: 'the map form draws the plan and the verdicts as they are: it works nothing out.',
   },
+  sync: {
+    may: ['units', 'record'],
+    instead: 'sync/ says what goes over the line: take the store, the clock and fetch as arguments.',
+  },
   store: { may: ['units', 'record'], instead: 'store/ keeps bytes: a page reaches it through app/state.' },
   workers: {
     may: ['units', 'geometry', 'record', 'catalogue', 'standards', 'plan', 'leash', 'judge', 'sheets'],
     instead: 'a worker runs the core: it knows no page and no database.',
   },
   app: {
-    may: ['units', 'record', 'catalogue', 'standards', 'plan', 'judge', 'sheets', 'store', 'workers'],
+    may: ['units', 'record', 'catalogue', 'standards', 'plan', 'judge', 'sheets', 'store', 'sync', 'workers'],
     instead: 'a page asks through judge/, workers/bridge or app/state; the planner itself runs in the worker.',
+  },
+  office: {
+    may: ['units', 'record', 'catalogue', 'standards', 'plan', 'leash', 'judge', 'sheets', 'sync'],
+    instead: 'the office keeps and hands on; what is true of a record is worked out in the core.',
   },
   'service-worker': { may: [], instead: 'the service worker serves what was built and imports none of it.' },
   cli: {
@@ -78,7 +86,13 @@ export const owners = {
   'workbox-routing': ['service-worker'],
   'workbox-core': ['service-worker'],
   '@turf/': ['plan'],
-  'node:': ['cli'],
+  'node:': ['cli', 'office'],
+  fastify: ['office'],
+  '@fastify/': ['office'],
+  kysely: ['office'],
+  libsql: ['office'],
+  pg: ['office'],
+  'lean-qr': ['app', 'office'],
 }
 
 /** Files where a reader may come in from outside: everything else must be reached from one of them. */
@@ -86,6 +100,8 @@ const entries = [
   /^app\/main\.tsx$/,
   /^app\/vite\.config\.ts$/,
   /^cli\/main\.ts$/,
+  /^office\/main\.ts$/,
+  /^sync\/client\.ts$/,
   /^workers\/[^/]+\.worker\.ts$/,
   /^service-worker\/[^/]+\.ts$/,
   /\.d\.ts$/,

@@ -105,7 +105,7 @@ export function mergeFacts(log: FactLog, facts: readonly unknown[]): Merged {
   const merged: Merged = { added: [], refused: [] }
   const readable: Fact[] = []
   for (const fact of facts) {
-    const refusal = malformed(log, fact)
+    const refusal = malformedFact(log.survey, fact)
     if (refusal) merged.refused.push(refusal)
     else readable.push(fact as Fact)
   }
@@ -187,7 +187,8 @@ function placeAnew(log: FactLog, facts: readonly Fact[]): void {
   }
 }
 
-function malformed(log: FactLog, fact: unknown): Refused | null {
+/** Why a fact from outside cannot belong to `survey` whatever else is held: its shape, its survey, no JSON; null: it can. */
+export function malformedFact(survey: string, fact: unknown): Refused | null {
   const whatToDo = 'Get the file or the facts again from the phone that wrote them.'
   const read = v.safeParse(factSchema, fact, { abortEarly: true })
   if (!read.success) {
@@ -195,8 +196,8 @@ function malformed(log: FactLog, fact: unknown): Refused | null {
     const path = v.getDotPath(issue)?.replaceAll('.', '/') ?? ''
     return { fact, why: 'malformed', path, expected: issue.expected ?? 'a fact', found: issue.received, whatToDo }
   }
-  if (read.output.survey !== log.survey)
-    return { fact, why: 'other-survey', path: 'survey', expected: log.survey, found: read.output.survey, whatToDo }
+  if (read.output.survey !== survey)
+    return { fact, why: 'other-survey', path: 'survey', expected: survey, found: read.output.survey, whatToDo }
   const fault = jsonFault(fact)
   return fault && { fact, why: 'malformed', ...fault, whatToDo }
 }
