@@ -5,7 +5,17 @@ import type { Metres } from '../units/quantity.ts'
 import type { Bodies, ClearanceAnswer, ClearanceOptions, Planner } from './answer.ts'
 import { apart } from './certify.ts'
 import { freeBound } from './free-bound.ts'
-import { better, type Found, polishAndProve, prove, type Quest, searchTaut, shortfall, type TautResult } from './search.ts'
+import {
+  better,
+  type Found,
+  polishAndProve,
+  prove,
+  type Quest,
+  searchTaut,
+  shortfall,
+  type TautResult,
+} from './search.ts'
+import { mostPauses, type SlackResult, searchSlack } from './slack.ts'
 import { type Tables, tablesOf } from './tables.ts'
 import { checkQuestion } from './team.ts'
 import { tightestOf } from './tightest.ts'
@@ -32,21 +42,34 @@ export const clearance: Planner = (scene, bodies, separation, options = {}) => {
   }
   const passes = { left: options.workCap ?? usualCap }
   const tables = tablesFor(scene, bodies)
-  const quest: Quest = { scene, walls, tables, bodies, separation, phi: freeAngle(bodies, separation), drift: options.drift ?? 0 }
+  const quest: Quest = {
+    scene,
+    walls,
+    tables,
+    bodies,
+    separation,
+    phi: freeAngle(bodies, separation),
+    drift: options.drift ?? 0,
+  }
   if (form?.kind === 'turn' && hasClosedTurn(form, bodies)) {
     const nodes = closedTurnNodes(scene, walls, form, bodies, separation)
     const found = nodes && prove(quest, nodes)
     if (found && found.certificate.clearance >= high - 2 * closedMargin) return answer(quest, found, high, options)
     const polished = nodes && better(found, polishAndProve(quest, nodes))
-    if (polished && polished.certificate.clearance >= high - 3 * closedMargin) return answer(quest, polished, high, options)
+    if (polished && polished.certificate.clearance >= high - 3 * closedMargin)
+      return answer(quest, polished, high, options)
   }
   if (!bodies.sideways) return nothing(high, false)
   const taut = searchTaut(quest, passes)
   if (taut.settled) high = Math.min(high, highOf(quest, taut))
-  if (high < 0) return nothing(high, true)
-  const found = taut.found
-  if (!found || found.certificate.clearance < 0) return nothing(high, taut.settled)
-  return { ...answer(quest, found, high, options), decided: taut.settled }
+  if (options.slack === false) {
+    if (high < 0) return nothing(high, taut.settled)
+    const found = taut.found
+    if (!found || found.certificate.clearance < 0) return nothing(high, taut.settled)
+    return { ...answer(quest, found, high, options), decided: taut.settled }
+  }
+  const slack = searchSlack(quest, taut.found, free, passes)
+  return slackAnswer(quest, slack, high, free, taut.settled, options)
 }
 
 /** Passes over the field, each a look at every state twice. */
@@ -100,6 +123,38 @@ function answer(quest: Quest, found: Found, high: Metres, options: ClearanceOpti
     motion,
     tautMotion: motion,
     decided: true,
+  }
+}
+
+function slackAnswer(
+  quest: Quest,
+  slack: SlackResult,
+  tautHigh: Metres,
+  free: Metres,
+  tautSettled: boolean,
+  options: ClearanceOptions,
+): ClearanceAnswer {
+  const worth = (found: Found | null | undefined) => found?.certificate.clearance ?? Number.NEGATIVE_INFINITY
+  const taut = slack.found[0] && worth(slack.found[0]) >= 0 ? slack.found[0] : null
+  const best = slack.found[mostPauses] ?? null
+  const settled = tautSettled && slack.settled
+  const low = worth(best)
+  let high = settled ? Math.min(free, Math.max(tautHigh, low, slack.value + shortfall(quest.separation))) : free
+  if (low >= free - 0.003) high = free
+  if (!best || low < 0) return { ...nothing(high, settled), mTautHigh: tautHigh < 0 ? null : tautHigh }
+  const wanted = options.pausesAt ?? 0.05
+  const pauses = slack.found.findIndex((found) => worth(found) >= wanted)
+  return {
+    mTaut: taut ? worth(taut) : null,
+    mTautHigh: tautHigh < 0 ? null : Math.max(tautHigh, taut ? worth(taut) : 0),
+    mSlack: low,
+    mSlackHigh: high,
+    pauses: pauses < 0 ? null : pauses,
+    tightest: tightestOf(quest.scene, quest.walls, quest.bodies, best.motion, best.certificate),
+    swing: best.certificate.swing,
+    motion: best.motion,
+    tautMotion: taut?.motion ?? null,
+    decided: settled,
   }
 }
 

@@ -101,15 +101,7 @@ export function gather(
         const across = cAcross + px * nx + py * ny
         // A corner behind a wall counts only where the centre is before it: else it is round a bend.
         if (across >= above || (across < 0 && cAcross < 0)) continue
-        add(
-          out,
-          across,
-          nx,
-          ny,
-          cxPsi * nx + cyPsi * ny,
-          (cxTheta - py) * nx + (cyTheta + px) * ny,
-          1,
-        )
+        add(out, across, nx, ny, cxPsi * nx + cyPsi * ny, (cxTheta - py) * nx + (cyTheta + px) * ny, 1)
       }
     }
     if (walls.reflex[i]) {
@@ -121,7 +113,15 @@ export function gather(
     const angle = theta - psi
     const turned = angle - 2 * Math.PI * Math.round(angle / (2 * Math.PI))
     const sign = turned > 0 ? 1 : -1
-    add(out, angleWeight * (terms.phi - angleSpare - Math.abs(turned)), 0, 0, angleWeight * sign, -angleWeight * sign, 0)
+    add(
+      out,
+      angleWeight * (terms.phi - angleSpare - Math.abs(turned)),
+      0,
+      0,
+      angleWeight * sign,
+      -angleWeight * sign,
+      0,
+    )
   }
 }
 
@@ -161,15 +161,7 @@ function cornerMargins(
     const ey = dy + terms.drift * su
     const distance = Math.hypot(ex, ey)
     if (distance - bodies.r < above && distance > 1e-9)
-      add(
-        out,
-        distance - bodies.r,
-        ex / distance,
-        ey / distance,
-        (terms.drift * (ey * cu - ex * su)) / distance,
-        0,
-        1,
-      )
+      add(out, distance - bodies.r, ex / distance, ey / distance, (terms.drift * (ey * cu - ex * su)) / distance, 0, 1)
   }
   // Robot's sides against the corner, in the robot's own axes.
   const qx = (vx - cx) * ct + (vy - cy) * st
@@ -194,15 +186,7 @@ function cornerMargins(
     // Moving the centre by w moves the corner by -w; turning moves it against the turn.
     const wx = -(gx * ct - gy * st)
     const wy = -(gx * st + gy * ct)
-    add(
-      out,
-      distance,
-      wx,
-      wy,
-      length * (cu * wy - su * wx),
-      bodies.d * (ct * wy - st * wx) + gx * qy - gy * qx,
-      1,
-    )
+    add(out, distance, wx, wy, length * (cu * wy - su * wx), bodies.d * (ct * wy - st * wx) + gx * qy - gy * qx, 1)
   }
   leashMargin(out, terms, i, hx, hy, cu, su, length)
 }
@@ -239,15 +223,7 @@ function leashMargin(
   add(out, value, towards * su, -towards * cu, -towards * along, 0, 0)
 }
 
-function crosses(
-  walls: Boundary,
-  i: number,
-  hx: number,
-  hy: number,
-  cu: number,
-  su: number,
-  length: number,
-): boolean {
+function crosses(walls: Boundary, i: number, hx: number, hy: number, cu: number, su: number, length: number): boolean {
   const nx = walls.nx[i] as number
   const ny = walls.ny[i] as number
   const off = (hx - (walls.x0[i] as number)) * nx + (hy - (walls.y0[i] as number)) * ny

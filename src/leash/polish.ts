@@ -222,8 +222,7 @@ function leastClearance(terms: PoseTerms, goal: GoalEdge[], margins: Margins, tr
   let least = 1
   for (let k = 0; k < track.size; k++) {
     gatherAt(terms, goal, margins, track, k, least)
-    for (let i = 0; i < margins.count; i++)
-      if (margins.clears[i]) least = Math.min(least, margins.value[i] as number)
+    for (let i = 0; i < margins.count; i++) if (margins.clears[i]) least = Math.min(least, margins.value[i] as number)
   }
   return least
 }
@@ -397,7 +396,17 @@ function solve(
 
 /** Inverse of a symmetric positive matrix, in place. */
 function invert3(m: Float64Array): void {
-  const [a, b, c, , d, e, , , f] = m as unknown as [number, number, number, number, number, number, number, number, number]
+  const [a, b, c, , d, e, , , f] = m as unknown as [
+    number,
+    number,
+    number,
+    number,
+    number,
+    number,
+    number,
+    number,
+    number,
+  ]
   const A0 = d * f - e * e
   const B0 = c * e - b * f
   const C0 = b * e - c * d

@@ -33,7 +33,7 @@ export interface Quest {
 
 /** How far a value of this grid was seen to lie below the truth, at most, metres: it grows with the leash. */
 export function shortfall(separation: Metres): Metres {
-  return 0.02 + 0.03 * separation
+  return 0.025 + 0.032 * separation
 }
 
 /** Certifies nodes; null where the motion breaks a promise. */
@@ -76,44 +76,56 @@ export interface TautResult {
 }
 
 /** The taut search: value function, roll-out, polishing, proof. `passes` caps the work and is counted down. */
-export function searchTaut(quest: Quest, passes: { left: number }): TautResult {
-  const { scene } = quest
-  const window = Math.min(directions / 2, Math.floor((quest.phi / (2 * Math.PI)) * directions + 1e-9))
-  const k = Math.round((scene.start.heading / (2 * Math.PI)) * directions)
-  let tau = 0
-  let field = fieldOf(scene, quest.tables, quest.separation, window, tau)
-  let settled = settle(field, passes)
-  let value = sample(field, scene.start.x, scene.start.y, k, 0, 0)
+export function searchTaut(quest: Quest, passes: Passes): TautResult {
+  let { field, value, settled } = settledField(quest, 0, passes)
   // The runs of headings are right at the level they were cut at: cut them again at the value found.
   if (value > 0.02) {
-    const first = value
-    tau = first
-    field = fieldOf(scene, quest.tables, quest.separation, window, tau)
-    settled = settle(field, passes) && settled
-    value = Math.min(first, sample(field, scene.start.x, scene.start.y, k, 0, 0))
+    const again = settledField(quest, value, passes)
+    field = again.field
+    settled = again.settled && settled
+    value = Math.min(value, again.value)
   }
   let found: Found | null = null
   if (value + shortfall(quest.separation) >= 0)
     for (const below of [0.01, 0.03]) {
       if (found && found.certificate.clearance > value) break
-      found = better(found, tautFrom(quest, field, value - below))
+      const level = value - below
+      const cost = costToGo(field, field.value, level, 16)
+      const { x, y, heading } = quest.scene.start
+      const rolled = rollOut(quest.scene, field, [{ value: field.value, cost }], level, { x, y, psi: heading })
+      const rough = rolled && headed(quest, rolled.stretches[0] as Node[], level)
+      if (rough) found = better(found, polishAndProve(quest, rough))
     }
   return { found, value, field, settled }
 }
 
-export function settle(field: Field, passes: { left: number }): boolean {
+/** Work still allowed, in passes over a field. */
+export interface Passes {
+  left: number
+}
+
+/** A field with its taut values, runs of headings cut at `tau`, and the value of the start. */
+export function settledField(quest: Quest, tau: Metres, passes: Passes) {
+  const window = Math.min(directions / 2, Math.floor((quest.phi / (2 * Math.PI)) * directions + 1e-9))
+  const field = fieldOf(quest.scene, quest.tables, quest.separation, window, tau)
+  const settled = settle(field, field.value, passes)
+  return { field, settled, value: startValue(quest, field, field.value) }
+}
+
+export function startValue(quest: Quest, field: Field, value: Float32Array): Metres {
+  const { x, y, heading } = quest.scene.start
+  return sample(field, value, x, y, Math.round((heading / (2 * Math.PI)) * directions), 0, 0)
+}
+
+export function settle(field: Field, value: Float32Array, passes: Passes): boolean {
   const most = Math.max(0, Math.min(16, passes.left))
-  const used = raise(field, most)
+  const used = raise(field, value, most)
   passes.left -= Math.min(used, most)
   return used <= most
 }
 
-function tautFrom(quest: Quest, field: Field, level: Metres): Found | null {
-  const { scene, bodies, walls } = quest
-  const { x, y, heading } = scene.start
-  const cost = costToGo(field, level, 16)
-  const rolled = rollOut(scene, field, cost, level, { x, y, psi: heading })
-  if (!rolled) return null
-  const headed = assignHeadings(walls, bodies, rolled, directions, quest.phi, Math.max(0.02, level + 0.06))
-  return headed && polishAndProve(quest, headed.nodes)
+/** A stretch with headings that keep the robot as clear as they can. */
+export function headed(quest: Quest, nodes: readonly Node[], level: Metres): Node[] | null {
+  const enough = Math.max(0.02, level + 0.06)
+  return assignHeadings(quest.walls, quest.bodies, nodes, directions, quest.phi, enough)?.nodes ?? null
 }

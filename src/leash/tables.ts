@@ -100,7 +100,12 @@ export function windowOf(tables: Tables, steps: number): { best: Float32Array; k
   return window
 }
 
-export function fillWindow(tables: Tables, steps: number, window: { best: Float32Array; known: Uint8Array }, node: number): void {
+export function fillWindow(
+  tables: Tables,
+  steps: number,
+  window: { best: Float32Array; known: Uint8Array },
+  node: number,
+): void {
   if (window.known[node]) return
   window.known[node] = 1
   fillRobot(tables, node)

@@ -1,3 +1,4 @@
+import { distanceToBoundary } from '../geometry/boundary.ts'
 import { holds } from '../geometry/polygon-check.ts'
 import type { Scene } from '../geometry/scene.ts'
 import type { Metres } from '../units/quantity.ts'
@@ -236,20 +237,20 @@ export function linked(field: Field, values: Float32Array, state: number, from: 
  * Raises the values to the fixed point of: clearance of the pose, and the best of a straight pull, a swing to either
  * side. Returns the number of passes; `most` caps them (then the values are still low, never high).
  */
-export function raise(field: Field, most: number): number {
+export function raise(field: Field, value: Float32Array, most: number): number {
   for (let pass = 1; pass <= most; pass++) {
     let raised = 0
     for (let i = 0; i < 2 * directions; i++) {
       const k = i < directions ? directions - 1 - i : i - directions
-      raised = Math.max(raised, raiseDirection(field, k))
+      raised = Math.max(raised, raiseDirection(field, value, k))
     }
     if (raised < 2e-4) return pass
   }
   return most + 1
 }
 
-function raiseDirection(field: Field, k: number): number {
-  const { value, pose, count, columns, rows, goal, first, last } = field
+function raiseDirection(field: Field, value: Float32Array, k: number): number {
+  const { pose, count, columns, rows, goal, first, last } = field
   const left = ((k + 1) % directions) * count
   const right = ((k + directions - 1) % directions) * count
   const here = k * count
@@ -303,8 +304,55 @@ export function inside(i: number, j: number, columns: number, rows: number, c: n
   )
 }
 
+/** Handler's clearance at a node when drawn `drift` along direction k, metres. */
+function drawn(field: Field, i: number, j: number, k: number, drift: Metres): Metres {
+  const { grid, walls, bodies } = field.tables
+  const x = field.x0 + i * grid.dx + drift * Math.cos(directionOf(k))
+  const y = field.y0 + j * grid.dy + drift * Math.sin(directionOf(k))
+  return distanceToBoundary(walls, x, y) - bodies.r
+}
+
+/**
+ * Values with one pause more than those given: where the handler stands the leash may go slack and be taken up again
+ * in whatever direction is best, as if the robot could always walk there. Too good where it cannot: such places are
+ * banned once they are found.
+ */
+export function withPause(field: Field, below: Float32Array, banned: Uint8Array, drift: Metres): Float32Array {
+  const { pose, count, columns, goal } = field
+  const value = Float32Array.from(below)
+  for (let at = 0; at < count; at++) {
+    if (goal[at] || banned[at]) continue
+    const i = at % columns
+    const j = Math.floor(at / columns)
+    let best = floor
+    for (let k = 0; k < directions; k++) {
+      const state = (k * count + at) * 2
+      const here = Math.max(below[state] as number, below[state + 1] as number)
+      if (here > best && (drift === 0 || drawn(field, i, j, k, drift) > best))
+        best = drift === 0 ? here : Math.min(here, drawn(field, i, j, k, drift))
+    }
+    if (best <= floor) continue
+    for (let k = 0; k < directions; k++) {
+      const state = (k * count + at) * 2
+      let limit = best
+      if (drift > 0 && (pose[state] as number) > floor) limit = Math.min(limit, drawn(field, i, j, k, drift))
+      for (let s = state; s < state + 2; s++)
+        if (Math.min(limit, pose[s] as number) > (value[s] as number)) value[s] = Math.min(limit, pose[s] as number)
+    }
+  }
+  return value
+}
+
 /** Value between the nodes in place, over the runs that overlap [from, to]; `floor` off the field. */
-export function sample(field: Field, x: Metres, y: Metres, k: number, from: number, to: number): number {
+export function sample(
+  field: Field,
+  value: Float32Array,
+  x: Metres,
+  y: Metres,
+  k: number,
+  from: number,
+  to: number,
+): number {
   const { grid } = field.tables
   const fx = (x - field.x0) / grid.dx
   const fy = (y - field.y0) / grid.dy
@@ -314,7 +362,6 @@ export function sample(field: Field, x: Metres, y: Metres, k: number, from: numb
   const wx = Math.max(0, fx - i)
   const wy = Math.max(0, fy - j)
   const at = (((k % directions) + directions) % directions) * field.count + j * field.columns + i
-  const { value } = field
   return (
     (linked(field, value, at * 2, from, to) * (1 - wx) + linked(field, value, (at + 1) * 2, from, to) * wx) * (1 - wy) +
     (linked(field, value, (at + field.columns) * 2, from, to) * (1 - wx) +

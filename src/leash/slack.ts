@@ -1,0 +1,150 @@
+import type { Metres } from '../units/quantity.ts'
+import type { Node } from './nodes.ts'
+import { pauseWay } from './pause.ts'
+import { costToGo, type Layer, type Rolled, rollOut } from './roll-out.ts'
+import {
+  better,
+  type Found,
+  headed,
+  type Passes,
+  polishAndProve,
+  type Quest,
+  settle,
+  settledField,
+  shortfall,
+  startValue,
+} from './search.ts'
+import { type Field, withPause } from './value.ts'
+
+/** At most so many pauses; more is no guiding. */
+export const mostPauses = 3
+/** How often a place for a pause is tried, found impossible and banned, before the level is given up. */
+const mostBans = 6
+
+export interface SlackResult {
+  /** Best proved motion with at most n pauses, by n; index 0 is the taut one. */
+  found: (Found | null)[]
+  /** Optimistic value of the start with three pauses, metres; the truth is below it plus the shortfall. */
+  value: Metres
+  settled: boolean
+}
+
+/**
+ * Motions with one, two and three pauses. `enough` is what none can exceed: once it is reached nothing is left to
+ * search for.
+ */
+export function searchSlack(quest: Quest, taut: Found | null, enough: Metres, passes: Passes): SlackResult {
+  const found: (Found | null)[] = [taut]
+  let highest = Number.NEGATIVE_INFINITY
+  let settled = true
+  for (let n = 1; n <= mostPauses; n++) {
+    const before = found[n - 1] ?? null
+    const reached = before?.certificate.clearance ?? Number.NEGATIVE_INFINITY
+    if (reached >= enough - 0.003) {
+      found.push(before)
+      highest = Math.max(highest, reached)
+      continue
+    }
+    const layered = searchWith(quest, n, passes)
+    settled = settled && layered.settled
+    highest = Math.max(highest, layered.value)
+    found.push(better(before, layered.found))
+  }
+  return { found, value: highest, settled }
+}
+
+function searchWith(quest: Quest, n: number, passes: Passes): { found: Found | null; value: Metres; settled: boolean } {
+  let settled = true
+  let optimistic = Number.NEGATIVE_INFINITY
+  let tau = 0
+  let field: Field | null = null
+  let banned = new Uint8Array(0)
+  // The level at which headings fall into runs is first guessed from a field cut at zero.
+  for (let round = 0; round < 2; round++) {
+    const base = settledField(quest, tau, passes)
+    field = base.field
+    banned = new Uint8Array(field.count)
+    const values = layersOf(quest, field, n, banned, passes)
+    settled = settled && values.settled && base.settled
+    const value = startValue(quest, field, values.layers[n] as Float32Array)
+    optimistic = round === 0 ? value : Math.min(optimistic, value)
+    if (optimistic <= 0.02) break
+    tau = optimistic
+  }
+  if (!field || optimistic + shortfall(quest.separation) < 0) return { found: null, value: optimistic, settled }
+  let found: Found | null = null
+  for (let ban = 0; ban <= mostBans; ban++) {
+    const values = layersOf(quest, field, n, banned, passes)
+    settled = settled && values.settled
+    const value = startValue(quest, field, values.layers[n] as Float32Array)
+    if (value + shortfall(quest.separation) < 0 || (found && found.certificate.clearance >= value)) break
+    const level = value - 0.01
+    const layers: Layer[] = []
+    for (const [i, layer] of values.layers.entries())
+      layers.push({ value: layer, cost: costToGo(field, layer, level, 16, layers[i - 1], banned) })
+    const { x, y, heading } = quest.scene.start
+    const rolled = rollOut(quest.scene, field, layers, level, { x, y, psi: heading }, banned)
+    if (!rolled) break
+    const joined = join(quest, rolled, level)
+    if (typeof joined === 'number') {
+      banAround(field, banned, rolled.pausedAt[joined] as number)
+      continue
+    }
+    found = better(found, polishAndProve(quest, joined))
+    if (found && found.certificate.clearance >= level) break
+    for (const at of rolled.pausedAt) banAround(field, banned, at)
+    if (rolled.pausedAt.length === 0) break
+  }
+  return { found, value: optimistic, settled }
+}
+
+function layersOf(quest: Quest, field: Field, n: number, banned: Uint8Array, passes: Passes) {
+  const layers: Float32Array[] = [field.value]
+  let settled = true
+  for (let i = 1; i <= n; i++) {
+    const value = withPause(field, layers[i - 1] as Float32Array, banned, quest.drift)
+    settled = settle(field, value, passes) && settled
+    layers.push(value)
+  }
+  return { layers, settled }
+}
+
+/** Joins the stretches by the robot's ways on the slack leash; the number of the first pause that has none. */
+function join(quest: Quest, rolled: Rolled, level: Metres): Node[] | number {
+  let nodes: Node[] = []
+  for (const [i, stretch] of rolled.stretches.entries()) {
+    let begin = stretch
+    const last = nodes.at(-1)
+    if (last) {
+      const way = wayBetween(quest, last, stretch[0] as Node, level)
+      if (!way) return i - 1
+      nodes = nodes.concat(way.nodes)
+      const unwind = way.psi - (stretch[0] as Node).psi
+      const heading = (way.nodes.at(-1) ?? last).heading
+      begin = stretch.map((node) => ({ ...node, psi: node.psi + unwind, heading }))
+    }
+    const turned = headed(quest, begin, level)
+    if (!turned) return Math.max(0, i - 1)
+    nodes = nodes.concat(turned)
+  }
+  return nodes
+}
+
+function wayBetween(quest: Quest, from: Node, to: Node, level: Metres) {
+  // The grid is coarse: a way a little tighter is still worth polishing.
+  for (const below of [0, 0.015, 0.03]) {
+    const way = pauseWay(quest, from, to, level - below)
+    if (way) return way
+  }
+  return null
+}
+
+function banAround(field: Field, banned: Uint8Array, at: number): void {
+  const i = at % field.columns
+  const j = Math.floor(at / field.columns)
+  for (let dj = -2; dj <= 2; dj++)
+    for (let di = -2; di <= 2; di++) {
+      if (i + di < 0 || j + dj < 0 || i + di >= field.columns || j + dj >= field.rows) continue
+      banned[(j + dj) * field.columns + i + di] = 1
+    }
+}
