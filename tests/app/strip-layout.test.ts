@@ -149,6 +149,12 @@ describe('words beside the strip', () => {
     expect(labels).toEqual([{ key: 'a', top: 90, height: 20, anchor: { x: 0, y: 100 } }])
   })
 
+  test('two that want the same place stand evenly above and below it', () => {
+    const wish = (key: string) => ({ key, anchor: { x: 0, y: 100 }, height: 20, rank: 0 })
+    const { labels } = spreadLabels([wish('a'), wish('b')], 0, 300)
+    expect(labels.map((one) => one.top)).toEqual([78, 102])
+  })
+
   test('what has no room is left out by rank and counted', () => {
     const wish = (key: string, rank: number) => ({ key, anchor: { x: 0, y: 50 }, height: 20, rank })
     const { labels, left } = spreadLabels([wish('c', 3), wish('a', 1), wish('b', 2)], 0, 50)

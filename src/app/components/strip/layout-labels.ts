@@ -37,21 +37,32 @@ export function spreadLabels(
     kept.push(wish)
   }
   kept.sort((a, b) => a.anchor.y - b.anchor.y || a.rank - b.rank)
-  const labels = kept.map((wish) => ({
-    key: wish.key,
-    top: wish.anchor.y - wish.height / 2,
-    height: wish.height,
-    anchor: wish.anchor,
-  }))
-  let free = top
-  for (const label of labels) {
-    label.top = Math.max(label.top, free)
-    free = label.top + label.height + gap
-  }
-  let ceiling = bottom
-  for (const label of [...labels].reverse()) {
-    label.top = Math.min(label.top, ceiling - label.height)
-    ceiling = label.top - gap
-  }
+  // Height of all words above each: with it taken off, "no overlap" means only "never less than the one before".
+  let above = 0
+  const offsets = kept.map((wish) => {
+    const own = above
+    above += wish.height + gap
+    return own
+  })
+  const wanted = kept.map((wish, i) => wish.anchor.y - wish.height / 2 - (offsets[i] ?? 0))
+  const greatest = bottom - above + gap
+  const labels = nearestRising(wanted).map((value, i) => {
+    const { key, anchor, height } = kept[i] as Wish
+    return { key, anchor, height, top: Math.max(Math.min(value, greatest), top) + (offsets[i] ?? 0) }
+  })
   return { labels, left: wishes.length - kept.length }
+}
+
+/** The rising sequence nearest to `values` (least squares): neighbours in the wrong order share their mean. */
+function nearestRising(values: readonly number[]): number[] {
+  const pools: { sum: number; count: number }[] = []
+  for (const value of values) {
+    let pool = { sum: value, count: 1 }
+    for (let last = pools.at(-1); last && last.sum / last.count > pool.sum / pool.count; last = pools.at(-1)) {
+      pool = { sum: last.sum + pool.sum, count: last.count + pool.count }
+      pools.pop()
+    }
+    pools.push(pool)
+  }
+  return pools.flatMap(({ sum, count }) => Array.from({ length: count }, () => sum / count))
 }

@@ -1,7 +1,7 @@
 import type { Verdict } from '../../../judge/result.ts'
 import { spreadLabels, type Wish } from './layout-labels.ts'
 import type { Point, StripItem, StripPart, StripView } from './layout-part.ts'
-import { ahead, leftOf, type PlacedPart, placeParts } from './layout-place.ts'
+import { ahead, breakHeight, leftOf, type PlacedPart, placeParts } from './layout-place.ts'
 import { drawnLength, drawnWidth, type StripScale, stripScale, widestDrawn } from './layout-scale.ts'
 import { wrap } from './layout-words.ts'
 
@@ -103,11 +103,11 @@ export function layoutStrip(parts: readonly StripPart[], view: StripView): Strip
     scene.nodes += cost
     const away = Math.abs(one.index - view.current) * 100
     scene.parts.push(scenePart(one, current))
-    if (one.broken) scene.breaks.push({ at: { x: one.start.x, y: one.start.y + 18 }, text: one.broken })
+    if (one.broken) scene.breaks.push({ at: { x: one.start.x, y: one.start.y + breakHeight / 2 }, text: one.broken })
     ask(`part ${one.part.id}`, one.part.title, middleInView(one, view), away, current, one.part.verdict)
     const next = placed[one.index + 1]
     if (one.part.turnText && next && next.broken === null)
-      ask(`turn ${one.part.id}`, one.part.turnText, one.end, away + 40, false, null)
+      ask(`turn ${one.part.id}`, one.part.turnText, one.corners[2], away + 40, false, null)
     one.part.items.forEach((item, i) => {
       const { at, across } = itemPlace(one, item, scale)
       if (at.y < 0 || at.y > view.height) return

@@ -89,6 +89,16 @@ export function zoneAsBefore(part: Segment, before: Segment | undefined, now: nu
   return { says: before.zone }
 }
 
+/** The shoreline of the part before, within the hour, where the way goes straight on; or why it may not be taken over. */
+export function shorelineAsBefore(before: Segment | undefined, now: number): AsBefore {
+  const shoreline = before?.words.shoreline
+  if (!before || !shoreline) return { refused: 'The part before has no shoreline: say it.' }
+  if (before.turn) return { refused: 'The walk turns between the parts: say the shoreline.' }
+  if (shoreline.time === undefined || now - Date.parse(shoreline.time) > asBeforeLasts)
+    return { refused: 'The part before was looked at over an hour ago: say the shoreline.' }
+  return { says: shoreline.says }
+}
+
 /** A surface ends at a mat, at a grating, where it is wet or loose. */
 function endsSurface(kind: string): boolean {
   return ['floor-edge', 'grating', 'wet-patch', 'loose-ground'].includes(kind)

@@ -52,7 +52,7 @@ export function StripMap(props: { parts: readonly StripPart[]; current: number; 
               key={`${gap.at.x} ${gap.at.y}`}
               class="strip-turn"
               x={gap.at.x}
-              y={gap.at.y - 12}
+              y={gap.at.y + size.text / 3}
               text-anchor="middle"
             >
               {gap.text}

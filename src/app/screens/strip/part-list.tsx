@@ -43,7 +43,7 @@ export function PartList(props: {
           const here = index === recorder.index
           return (
             <li key={segment.id} aria-current={here ? 'step' : undefined}>
-              <button type="button" class="key wide part-key" onClick={() => props.pick(index)} disabled={here}>
+              <button type="button" class="key wide part-key" onClick={() => props.pick(index)} aria-pressed={here}>
                 <b>
                   Part {index + 1}
                   {segment.name ? `, ${segment.name}` : ''}

@@ -1,6 +1,7 @@
 import { useEffect, useState } from 'preact/hooks'
 import { kind } from '../../../catalogue/kinds.ts'
 import { items } from '../../../record/answers.ts'
+import type { FactLog } from '../../../record/log.ts'
 import { setWord } from '../../../record/operations/answer.ts'
 import { addReading } from '../../../record/operations/reading.ts'
 import { remove } from '../../../record/operations/removal.ts'
@@ -14,6 +15,7 @@ import {
   isTooQuick,
   type PlainButton,
   plainButtons,
+  shorelineAsBefore,
   zoneAsBefore,
 } from '../../components/strip/plain-rules.ts'
 import { remember, remembered } from '../../components/strip/remembered.ts'
@@ -31,6 +33,8 @@ export function PlainSheet(props: {
   recorder: Recorder
   go(route: SheetRoute): void
   done(opened: string | null): void
+  /** The next part is open: its card follows. */
+  next(opened: string): void
 }) {
   const { recorder } = props
   const { segment, before, index, walk, session } = recorder
@@ -115,12 +119,36 @@ export function PlainSheet(props: {
     }
     return recorder.write((log) => addReading(log, segment.id, 'width', reading), `width over ${stick} m, stick`)
   }
-  const close = async () => {
-    const isLast = walk.segments.at(-1)?.id === segment.id
-    if (!isLast) return props.done(null)
-    const next = session.newId('segment')
-    const label = `part ${index + 1} closed, part ${walk.segments.length + 1} is open`
-    if (await recorder.write((log) => addSegment(log, walk.id, nextPart(next)), label)) props.done(next)
+  const isLast = walk.segments.at(-1)?.id === segment.id
+  const shoreline = shorelineAsBefore(before, now)
+  // What the last key answers as before, in words and in facts; only what has no answer yet.
+  const carried = [
+    ...('says' in zone && segment.zone === undefined
+      ? [
+          {
+            words: 'surroundings',
+            draft: (log: FactLog) => [setSegmentField(log, segment.id, 'zone', zone.says)].flat(),
+          },
+        ]
+      : []),
+    ...('says' in shoreline && !segment.words.shoreline
+      ? [
+          {
+            words: `shoreline ${shoreline.says}`,
+            draft: (log: FactLog) =>
+              setWord(log, segment.id, 'shoreline', recorder.answer(shoreline.says, 'inherited')),
+          },
+        ]
+      : []),
+  ]
+  const asBefore = carried.length > 0 ? `As before: ${carried.map((one) => one.words).join(', ')}. ` : ''
+  const next = async () => {
+    const id = session.newId('segment')
+    const saved = await recorder.write(
+      (log) => [...carried.flatMap((one) => one.draft(log)), ...addSegment(log, walk.id, nextPart(id))],
+      `${asBefore.toLowerCase()}part ${index + 1} closed, part ${walk.segments.length + 1} is open`,
+    )
+    if (saved) props.next(id)
   }
 
   return (
@@ -221,8 +249,8 @@ export function PlainSheet(props: {
           void recorder.write((log) => setSegmentField(log, segment.id, 'zone', zone.says), 'surroundings as before')
         }
       />
-      <button type="button" class="key primary" onClick={() => void close()}>
-        {walk.segments.at(-1)?.id === segment.id ? 'Close this part, open the next' : 'Done'}
+      <button type="button" class="key primary" onClick={() => (isLast ? void next() : props.done(null))}>
+        {isLast ? `${asBefore}Next plain stretch` : 'Done'}
       </button>
     </div>
   )

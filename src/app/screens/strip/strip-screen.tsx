@@ -157,9 +157,9 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
         trail={trail}
         setTrail={setTrail}
         said={writer.said}
-        opened={(id) => {
+        opened={(id, onCard) => {
           setAt(id)
-          setTrail([])
+          setTrail(onCard ? [{ at: 'plain' }] : [])
         }}
       />
     </div>

@@ -20,7 +20,8 @@ export function StripSheets(props: {
   trail: readonly SheetRoute[]
   said: Said | null
   setTrail(trail: readonly SheetRoute[]): void
-  opened(segment: string): void
+  /** A part was opened; on the card, the card goes on with it. */
+  opened(segment: string, onCard: boolean): void
 }) {
   const { recorder, trail, setTrail } = props
   const route = trail.at(-1)
@@ -41,9 +42,10 @@ export function StripSheets(props: {
         onCard={onCard}
         go={(next) => setTrail([...trail, next])}
         done={(opened) => {
-          if (opened) props.opened(opened)
+          if (opened) props.opened(opened, false)
           else back()
         }}
+        next={(opened) => props.opened(opened, true)}
       />
     </Sheet>
   )
@@ -55,12 +57,13 @@ function Inside(props: {
   onCard: boolean
   go(route: SheetRoute): void
   done(opened: string | null): void
+  next(opened: string): void
 }) {
   const { recorder, route, go } = props
   const done = () => props.done(null)
   switch (route.at) {
     case 'plain':
-      return <PlainSheet recorder={recorder} go={go} done={props.done} />
+      return <PlainSheet key={recorder.segment.id} recorder={recorder} go={go} done={props.done} next={props.next} />
     case 'reading':
       return (
         <ReadingSheet
