@@ -18,6 +18,8 @@ type Written = string | Uint8Array | Refusal
 export interface Form {
   /** How its file's name ends. */
   ending: string
+  /** Readings and drawings rather than a sheet: a client has none of a walk that nobody may be sent on. */
+  data?: true
   write(outline: Outline, of: Source): Written | Promise<Written>
 }
 
@@ -37,9 +39,14 @@ export const forms: Readonly<Record<string, Form>> = {
   word: { ending: 'docx', write: (outline) => toWord(outline) },
   geojson: {
     ending: 'geojson',
+    data: true,
     write: (_, { survey, assessment, ...options }) => toGeoJson(survey, assessment, options),
   },
-  csv: { ending: 'csv', write: (_, { survey, assessment, ...options }) => toCsv(survey, assessment, options) },
+  csv: {
+    ending: 'csv',
+    data: true,
+    write: (_, { survey, assessment, ...options }) => toCsv(survey, assessment, options),
+  },
   audio: { ending: 'txt', write: (outline) => toAudio(outline) },
 }
 

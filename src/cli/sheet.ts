@@ -58,6 +58,11 @@ async function written(
 ): Promise<string | Uint8Array | Complaint> {
   const tree = outline(survey, walk, assessment, reader, { on: assessment.on, draft }, team)
   if (tree.kind === 'refusal') return complaint(`${tree.why} (missing: ${tree.missing.join(', ')})`, tree.whatToDo)
+  if (reader === 'client' && form.data && (walk.verdict === 'do-not-use' || walk.verdict === 'not-known'))
+    return complaint(
+      `${walk.name} is ${walk.verdict}: a client has no ${form.ending} of it`,
+      'write --form html or text',
+    )
   const unfit = draft || reader !== 'client' ? null : unfitWords(walk, tree)
   if (unfit) return unfit
   const content = await form.write(tree, { survey, assessment, walk: walk.id, draft })
