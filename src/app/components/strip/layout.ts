@@ -89,7 +89,7 @@ export function layoutStrip(parts: readonly StripPart[], view: StripView): Strip
   const ask = (key: string, text: string, anchor: Point, rank: number, strong: boolean, verdict: Verdict | null) => {
     if (anchor.y < 0 || anchor.y > view.height) return
     const room = (wide - (verdict ? view.text + 4 : 0)) / (strong ? boldIsWider : 1)
-    const lines = wrap(text, room, view.text, 4)
+    const lines = wrap(text, room, view.text, strong ? 6 : 4)
     wishes.push({ key, anchor, height: lines.length * leading, rank, label: { key, lines, strong, verdict } })
   }
 

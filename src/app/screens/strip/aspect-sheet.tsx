@@ -6,7 +6,7 @@ import { sentence } from '../../components/strip/sentence.ts'
 import { featureWords, rodHeight } from '../../components/strip/strip-words.ts'
 import { type How, HowChips } from './how-chips.tsx'
 import { addListed, featuresOf, listedItem } from './listed.ts'
-import type { Recorder } from './recorder.ts'
+import { type Recorder, stamp } from './recorder.ts'
 import { type AspectWithKinds, aspectTitles, type SheetRoute } from './sheet-route.ts'
 import { sweptHeight } from './swept-height.ts'
 
@@ -108,7 +108,6 @@ export function sweptReading(recorder: Recorder, height: number) {
     value: height,
     bound: 'above' as const,
     instrument: 'rod' as const,
-    person: recorder.session.person.value,
-    time: new Date().toISOString(),
+    ...stamp(recorder.session),
   }
 }

@@ -23,7 +23,7 @@ import { lengthOf, rodHeight, shown, widthOf } from '../../components/strip/stri
 import { sweptReading } from './aspect-sheet.tsx'
 import { featuresOf } from './listed.ts'
 import { nextPart } from './reading-sheet.tsx'
-import type { Recorder } from './recorder.ts'
+import { type Recorder, stamp } from './recorder.ts'
 import type { SheetRoute } from './sheet-route.ts'
 import { commonSigns } from './sign-sheet.tsx'
 import { sweptHeight } from './swept-height.ts'
@@ -113,8 +113,7 @@ export function PlainSheet(props: {
       value: Number(stick),
       bound: 'above',
       instrument: 'stick',
-      person: session.person.value,
-      time: new Date().toISOString(),
+      ...stamp(session),
       ...((segment.readings.width ?? []).length > 0 ? { place: 'another' as const } : {}),
     }
     return recorder.write((log) => addReading(log, segment.id, 'width', reading), `width over ${stick} m, stick`)

@@ -6,7 +6,7 @@ import { ReadingForm, type TypedReading } from '../../components/strip/reading-f
 import { readingWords } from '../../components/strip/strip-words.ts'
 import { draftOf, keepDraft } from './drafts.ts'
 import { quantityEntry } from './quantity-entry.ts'
-import type { Recorder } from './recorder.ts'
+import { type Recorder, stamp } from './recorder.ts'
 
 /**
  * The keypad sheet for one quantity. A length of the walk's last part closes it and opens the next in the same commit:
@@ -35,8 +35,7 @@ export function ReadingSheet(props: {
       ...values,
       ...signed(feature, quantity, values),
       instrument,
-      person: session.person.value,
-      time: new Date().toISOString(),
+      ...stamp(session),
     }
     const next =
       props.opensNext && quantity === 'length' && isLast && entry.readings.length === 0

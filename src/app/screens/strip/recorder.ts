@@ -27,6 +27,12 @@ export interface Recorder {
   answer(says: string, how: Answer['how'], more?: Partial<Answer>): Answer
 }
 
+/** Who and when, for an answer or a reading; nobody's name where none was given. */
+export function stamp(session: Session): { person?: string; time: string } {
+  const person = session.person.value
+  return { ...(person === '' ? {} : { person }), time: new Date().toISOString() }
+}
+
 /** Commits, reads back, shakes the phone a little. `said` is null until something happened. */
 export function useWriter(session: Session) {
   const [said, setSaid] = useState<Said | null>(null)

@@ -3,7 +3,7 @@ import { useLocation } from 'preact-iso'
 import { addSegment } from '../../../record/operations/segment.ts'
 import type { Segment, Walk } from '../../../record/survey.ts'
 import '../../components/strip/strip.css'
-import { usePageHead } from '../../components/page-head.tsx'
+import { PageHead, usePageHead } from '../../components/page-head.tsx'
 import { StripMap } from '../../components/strip/strip-map.tsx'
 import { stripParts } from '../../components/strip/strip-words.ts'
 import { TapeRule } from '../../components/tape-rule.tsx'
@@ -15,7 +15,7 @@ import { placeOfDraft } from './draft-route.ts'
 import { Keys } from './keys.tsx'
 import { PartList } from './part-list.tsx'
 import { nextPart } from './reading-sheet.tsx'
-import { type Recorder, useWriter } from './recorder.ts'
+import { type Recorder, stamp, useWriter } from './recorder.ts'
 import { ResumeCard } from './resume-card.tsx'
 import type { SheetRoute } from './sheet-route.ts'
 import { answersLeft, partLine } from './so-far-line.ts'
@@ -26,7 +26,7 @@ export function StripScreen(props: { session: Session; walk: string }) {
   const walk = props.session.survey.value.view.walks.find((one) => one.id === props.walk)
   if (!walk)
     return (
-      <main class="strip-screen">
+      <main class="page">
         <p>This walk is not on this phone.</p>
       </main>
     )
@@ -83,8 +83,7 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
     answer: (says, how, more) => ({
       says,
       how,
-      person: session.person.value,
-      time: new Date().toISOString(),
+      ...stamp(session),
       ...more,
     }),
   }
@@ -98,13 +97,25 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
       <main class="strip-main">
         <div class="strip-fold">
           <header class="strip-top">
-            <p class="soft">
-              {walk.name}
-              {segment.name ? ` · ${segment.name}` : ''}
-            </p>
-            <h1 ref={heading} tabIndex={-1}>
-              Part {index + 1} of {walk.segments.length}
-            </h1>
+            <div class="top-row">
+              <div>
+                <p class="soft">
+                  {walk.name}
+                  {segment.name ? ` · ${segment.name}` : ''}
+                </p>
+                <h1 ref={heading} tabIndex={-1}>
+                  Part {index + 1} of {walk.segments.length}
+                </h1>
+              </div>
+              <a class="key" href={`/venue/${session.survey.value.survey}`}>
+                Venue
+              </a>
+            </div>
+            {session.person.value === '' && (
+              <a class="key wide" href="/settings">
+                Whose readings are these? Give your name
+              </a>
+            )}
             <p class="so-far">
               <b>{line.text}</b> <span class={line.complete ? '' : 'soft'}>{line.detail}</span>
             </p>
@@ -170,12 +181,12 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
 function FirstPart({ session, walk }: { session: Session; walk: Walk }) {
   const writer = useWriter(session)
   return (
-    <main class="strip-screen">
-      <header class="strip-top">
-        <p class="soft">{walk.name}</p>
-        <h1>No part yet</h1>
-      </header>
-      <p>Stand where the walk starts.</p>
+    <main class="page">
+      <PageHead
+        title={walk.name}
+        back={{ href: `/venue/${session.survey.value.survey}`, label: session.survey.value.view.name }}
+        about={<p>No part of it is recorded yet. Stand where the walk starts.</p>}
+      />
       <button
         type="button"
         class="key primary"

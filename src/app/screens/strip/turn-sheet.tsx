@@ -4,7 +4,7 @@ import { addReading } from '../../../record/operations/reading.ts'
 import type { Segment } from '../../../record/survey.ts'
 import { Chips } from '../../components/strip/chips.tsx'
 import { lengthOf, turnWords } from '../../components/strip/strip-words.ts'
-import type { Recorder } from './recorder.ts'
+import { type Recorder, stamp } from './recorder.ts'
 import type { SheetRoute } from './sheet-route.ts'
 
 /** The change of direction at a part's end. With nothing recorded on the open part, it is the turn where you stand. */
@@ -24,8 +24,7 @@ export function TurnSheet(props: { recorder: Recorder; go(route: SheetRoute): vo
       value: (sign * Math.PI) / 2,
       bound: 'exact' as const,
       instrument: 'square' as const,
-      person: session.person.value,
-      time: new Date().toISOString(),
+      ...stamp(session),
     }
     const saved = await recorder.write(
       (log) => [

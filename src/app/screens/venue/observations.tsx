@@ -53,7 +53,7 @@ export function Observations({ writer, zone }: { writer: Writer; zone: Zone }) {
 
   return (
     <section class="stack" aria-label={`Surroundings of ${zone.name}`}>
-      <h4>Surroundings by the hour</h4>
+      <h3>Surroundings by the hour</h3>
       {zone.observations.length === 0 && <p>Nobody has observed this zone yet.</p>}
       <ul class="plain-list">
         {zone.observations.map((one) => (
