@@ -4,6 +4,7 @@ import type { Dimension, OwnScene, Pinch } from '../plan/pinches.ts'
 import { buildScene, reverseForm } from '../plan/scenes.ts'
 import type { Metres } from '../units/quantity.ts'
 import type { StopsReckoned } from './checks/stop.ts'
+import { roomState } from './finding.ts'
 import type { Grid } from './window.ts'
 
 /** Room a side at a pinch: [certified, optimistic]. Null: no motion at that end. */
@@ -16,45 +17,57 @@ export interface Room {
   nearest: Metres | null
 }
 
+/** Held taut all the way, and with planned pauses; the second repeats the first where pauses were not asked for. */
+export interface Rooms {
+  taut: Room
+  slack: Room
+}
+
+/** What a run has solved already. */
+export interface RoomSolver {
+  /** Room at the ends of every width, at both ends and the value of every other measure, and at both separations. */
+  room(pinch: Pinch, separations: readonly Metres[], ask: Ask): Rooms
+  /** Windows of segments that nothing but reaction and slope tells apart, by those. */
+  grids: Map<string, Grid>
+  stops: StopsReckoned
+}
+
+export interface Ask {
+  /** Planned pauses may be used: the handler is shown to stand, and this is a place for it. */
+  slack: boolean
+  /** Clearance that is needed, and the caution band above it. */
+  need: Metres
+  band: Metres
+  /** The way back. */
+  back: boolean
+}
+
 /** How far a standing handler may be moved during a pause. */
 const drift: Metres = 0.1
 /** Up to a right angle, and at most a little past it: there the value at a right angle bounds the optimistic end. */
 const boundedBySquare = (Math.PI * 95) / 180
 const square = Math.PI / 2
+/** Widths of searched scenes are rounded to this, down for the certified end and up for the other, so that they are met again. */
+const grain: Metres = 0.01
+/** Above what any pinch leaves. */
+const beyondUse: Metres = 10
 
-/** Solves pinches, each scene once for a run. */
-export interface RoomSolver {
-  /**
-   * Room at the ends of every width, at both ends and the value of every other measure, and at both separations.
-   * @param slack whether planned pauses may be used (the handler is shown to stand, and this is a place for it).
-   * @param pausesAt clearance at which pauses are counted.
-   */
-  room(pinch: Pinch, separations: readonly Metres[], ask: Ask): Room
-  /** Windows of segments that nothing but reaction and slope tells apart, by those. */
-  grids: Map<string, Grid>
-  /** Stops already reckoned. */
-  stops: StopsReckoned
-}
-
-export interface Ask {
-  slack: boolean
-  pausesAt: Metres
-  back: boolean
-}
+type Question = SceneForm | OwnScene
+type Ends = (dim: Dimension, end: 'low' | 'high') => Metres
 
 export function roomSolver(planner: Planner, bodies: Bodies): RoomSolver {
-  const known = new Map<string, Room>()
+  const known = new Map<string, Rooms>()
 
-  function solve(form: SceneForm | OwnScene, separation: Metres, ask: Ask): Room {
+  function solve(form: Question, separation: Metres, ask: Ask): Rooms {
     const asked = form.kind !== 'own' && ask.back ? reverseForm(form) : form
-    const key = `${asked.kind === 'own' ? asked.key : Object.values(asked).join(' ')} ${separation} ${ask.slack} ${ask.pausesAt}`
+    const key = `${asked.kind === 'own' ? asked.key : Object.values(asked).join(' ')} ${separation} ${ask.slack} ${ask.need}`
     const before = known.get(key)
     if (before) return before
     const scene = asked.kind === 'own' ? asked.draw(separation) : drawn(asked, separation)
     // A pinch that cannot be drawn is one that nobody can pass, and nobody knows.
     const room = scene
-      ? roomIn(planner(scene, bodies, separation, options(ask)), ask)
-      : { low: null, high: freeBound, pauses: 0, nearest: null }
+      ? roomsIn(planner(scene, bodies, separation, { pausesAt: ask.need, drift, slack: ask.slack }))
+      : { taut: unknown, slack: unknown }
     known.set(key, room)
     return room
   }
@@ -64,44 +77,93 @@ export function roomSolver(planner: Planner, bodies: Bodies): RoomSolver {
     return built.ok ? built.scene : null
   }
 
+  function over(pinch: Pinch, separations: readonly Metres[], ask: Ask, ends: Ends): Rooms {
+    const taut = new Bracket()
+    const slack = new Bracket()
+    for (const free of combinations(pinch.free)) {
+      const narrow = pinch.build({ ...at(pinch.widths, 'low', ends), ...free })
+      const wide = pinch.build({ ...at(pinch.widths, 'high', ends), ...bounding(free) })
+      const there = separations.map((separation) => solve(narrow, separation, ask))
+      const hoped = separations.map((separation) => solve(wide, separation, ask))
+      for (const [bracket, mode] of [
+        [taut, 'taut'],
+        [slack, 'slack'],
+      ] as const) {
+        for (const one of there) bracket.certify(one[mode])
+        bracket.hope(hoped.map((one) => one[mode].high))
+      }
+    }
+    return { taut: taut.room(pinch.offLow), slack: slack.room(pinch.offLow) }
+  }
+
   return {
     grids: new Map(),
     stops: new Map(),
     room(pinch, separations, ask) {
-      let low: Room = { low: Number.POSITIVE_INFINITY, high: null, pauses: 0, nearest: null }
-      let most: Metres | null = null
-      for (const free of combinations(pinch.free)) {
-        const narrow = pinch.build({ ...ends(pinch.widths, 'low'), ...free })
-        const wide = pinch.build({ ...ends(pinch.widths, 'high'), ...bounding(free) })
-        let best: Metres | null = Number.POSITIVE_INFINITY
-        for (const separation of separations) {
-          const there = solve(narrow, separation, ask)
-          if (lesser(there.low, low.low)) low = there
-          const hoped = solve(wide, separation, ask)
-          best = best === null || hoped.high === null ? null : Math.min(best, hoped.high)
-        }
-        if (best !== null && (most === null || best > most)) most = best
+      if (isSearched(pinch)) {
+        const coarse = over(pinch, separations, ask, rounded)
+        if (isSettled(coarse, ask)) return coarse
       }
-      const certified = low.low === null ? null : low.low - pinch.offLow
-      return { low: certified, high: most, pauses: low.pauses, nearest: low.nearest }
+      return over(pinch, separations, ask, (dim, end) => dim[end])
     },
   }
 }
 
-const freeBound: Metres = 10
+const unknown: Room = { low: null, high: beyondUse, pauses: 0, nearest: null }
 
-function options(ask: Ask) {
-  return { pausesAt: ask.pausesAt, drift, slack: ask.slack }
+/** The worst certified room of all tried, and the best that can be hoped for. */
+class Bracket {
+  private worst: Room = { low: Number.POSITIVE_INFINITY, high: null, pauses: 0, nearest: null }
+  private most: Metres | null = null
+
+  certify(room: Room): void {
+    if (this.worst.low === null) return
+    if (room.low === null || room.low < this.worst.low) this.worst = room
+  }
+
+  /** Optimistic ends of one combination at each separation: the least of them is what it allows. */
+  hope(ends: readonly (Metres | null)[]): void {
+    if (ends.some((one) => one === null)) return
+    const least = Math.min(...(ends as Metres[]))
+    if (this.most === null || least > this.most) this.most = least
+  }
+
+  room(offLow: Metres): Room {
+    const { low, pauses, nearest } = this.worst
+    return { low: low === null ? null : low - offLow, high: this.most, pauses, nearest }
+  }
 }
 
+/** Turns up to a right angle and openings in line have a closed form; every other scene is searched. */
+function isSearched(pinch: Pinch): boolean {
+  const form = pinch.build({ ...at(pinch.widths, 'low', (dim, end) => dim[end]), ...combinations(pinch.free).at(-1) })
+  return form.kind !== 'indoor' && !(form.kind === 'turn' && form.angle <= square + 1e-9)
+}
+
+/** A rounded answer holds where exact widths cannot give another state. */
+function isSettled({ taut, slack }: Rooms, ask: Ask): boolean {
+  const state = roomState(taut, ask.need, ask.band)
+  if (state === 'passes' || (state === 'fails' && !ask.slack)) return true
+  if (state !== 'fails') return false
+  const paused = roomState(slack, ask.need, ask.band)
+  return paused === 'passes' || paused === 'fails'
+}
+
+const rounded: Ends = (dim, end) =>
+  end === 'low'
+    ? Math.max(grain, Math.floor(dim.low / grain + 1e-9) * grain)
+    : Math.ceil(dim.high / grain - 1e-9) * grain
+
 /** Only a certified motion counts at the low end; the planner's cap on work leaves its free bounds at the high one. */
-function roomIn(answer: ClearanceAnswer, ask: Ask): Room {
-  if (!ask.slack) return { low: answer.mTaut, high: answer.mTautHigh, pauses: 0, nearest: null }
+function roomsIn(answer: ClearanceAnswer): Rooms {
   return {
-    low: answer.mSlack,
-    high: answer.mSlackHigh,
-    pauses: answer.pauses ?? 0,
-    nearest: nearestSlack(answer.motion),
+    taut: { low: answer.mTaut, high: answer.mTautHigh, pauses: 0, nearest: null },
+    slack: {
+      low: answer.mSlack,
+      high: answer.mSlackHigh,
+      pauses: answer.pauses ?? 0,
+      nearest: nearestSlack(answer.motion),
+    },
   }
 }
 
@@ -116,13 +178,8 @@ function nearestSlack(motion: Motion | null): Metres | null {
   return nearest
 }
 
-function lesser(a: Metres | null, b: Metres | null): boolean {
-  if (b === null) return false
-  return a === null || a < b
-}
-
-function ends(dims: Readonly<Record<string, Dimension>>, end: 'low' | 'high'): Record<string, number> {
-  return Object.fromEntries(Object.entries(dims).map(([letter, dim]) => [letter, dim[end]]))
+function at(dims: Readonly<Record<string, Dimension>>, end: 'low' | 'high', ends: Ends): Record<string, number> {
+  return Object.fromEntries(Object.entries(dims).map(([letter, dim]) => [letter, ends(dim, end)]))
 }
 
 /** Just past a right angle the optimistic end is taken at the right angle, where a closed form bounds it. */

@@ -56,7 +56,12 @@ function wayOut({ setting, segment }: Site, id: string, name: string, car: Pinch
   const feature = segment.features.find((one) => one.id === id)
   const backs = feature?.words.wayOut?.says === 'backs-out'
   const shown = feature?.words.backsOutShown?.says === 'yes'
-  const room = rooms.room(car, [team.gatheredSeparation], { slack: false, pausesAt: need, back: false })
+  const { taut: room } = rooms.room(car, [team.gatheredSeparation], {
+    slack: false,
+    need,
+    band: frameBand,
+    back: false,
+  })
   const demand = team.envelope + 2 * need
   const side = (end: number | null) => (end === null ? 0 : team.envelope + 2 * end)
   const raw = backs && !shown ? 'unsure' : roomState(room, need, frameBand)

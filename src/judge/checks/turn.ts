@@ -84,19 +84,15 @@ function pairOf(site: Site, pinch: Pinch, rooms: RoomSolver, nominal: PairCheck 
       greatestSeparation(team, leash, site.slope.steepest),
     ]
     const within = separations.filter((one): one is number => one !== null)
-    const ask = { pausesAt: need, back: false }
-    const taut = rooms.room(pinch, within, { ...ask, slack: false })
+    const { taut, slack } = rooms.room(pinch, within, { slack: pausing, need, band: frameBand, back: false })
     const state = roomState(taut, need, frameBand)
     let solved: Solved = { room: taut, state, pauses: 0 }
-    if (pausing && (state === 'fails' || state === 'unsure')) {
-      const slack = rooms.room(pinch, within, { ...ask, slack: true })
-      const with_ = roomState(slack, need, frameBand)
-      const counts = pauseCounts(team, leash, slack.nearest ?? 0)
+    if (pausing && (state === 'fails' || state === 'unsure') && pauseCounts(team, leash, slack.nearest ?? 0)) {
+      const paused = roomState(slack, need, frameBand)
       // A pause is a caution however wide the room.
-      if (counts && (with_ === 'passes' || with_ === 'tight'))
+      if (paused === 'passes' || paused === 'tight')
         solved = { room: slack, state: 'tight', pauses: Math.max(1, slack.pauses) }
-      else if (counts && with_ === 'unsure')
-        solved = { room: { ...taut, high: slack.high }, state: 'unsure', pauses: 0 }
+      else if (paused === 'unsure') solved = { room: { ...taut, high: slack.high }, state: 'unsure', pauses: 0 }
     }
     known.set(leash, solved)
     return solved
