@@ -4,6 +4,7 @@ import {
   finishAsBefore,
   isTooQuick,
   plainButtons,
+  shorelineAsBefore,
   zoneAsBefore,
 } from '../../src/app/components/strip/plain-rules.ts'
 import { addListed, featuresOf, removeListed } from '../../src/app/screens/strip/listed.ts'
@@ -68,6 +69,16 @@ describe('the plain stretch card', () => {
     expect(zoneAsBefore(segment(), before, noon)).toEqual({ says: 'hall' })
     expect(zoneAsBefore(segment(), before, noon + 31 * 60_000)).toHaveProperty('refused')
     expect(zoneAsBefore(segment(), segment({ words: { finish: carpet } }), noon)).toHaveProperty('refused')
+  })
+
+  test('the shoreline is as before within the hour and straight on alone', () => {
+    const shoreline = { says: 'left', how: 'swept' as const, time: '2026-11-30T11:30:00Z' }
+    const before = segment({ words: { shoreline } })
+    expect(shorelineAsBefore(before, noon)).toEqual({ says: 'left' })
+    expect(shorelineAsBefore(before, noon + 31 * 60_000)).toHaveProperty('refused')
+    const turn = { id: 't', kind: 'turn', readings: {}, words: {} }
+    expect(shorelineAsBefore({ ...before, turn }, noon)).toHaveProperty('refused')
+    expect(shorelineAsBefore(segment(), noon)).toHaveProperty('refused')
   })
 
   test('the rod stands at strike + 0.10 m with its own 10 mm, or at the headroom of the pack', () => {

@@ -9,6 +9,7 @@ import { addSegment, setSegmentField } from '../../../record/operations/segment.
 import type { Answer, Reading } from '../../../record/survey.ts'
 import { openedAt } from '../../components/strip/card-clock.ts'
 import { Chips } from '../../components/strip/chips.tsx'
+import { PlainKey } from '../../components/strip/plain-key.tsx'
 import {
   asksSingly,
   finishAsBefore,
@@ -18,7 +19,8 @@ import {
   shorelineAsBefore,
   zoneAsBefore,
 } from '../../components/strip/plain-rules.ts'
-import { remember, remembered } from '../../components/strip/remembered.ts'
+import { remembered } from '../../components/strip/remembered.ts'
+import { StickLength } from '../../components/strip/stick-length.tsx'
 import { lengthOf, rodHeight, shown, widthOf } from '../../components/strip/strip-words.ts'
 import { sweptReading } from './aspect-sheet.tsx'
 import { featuresOf } from './listed.ts'
@@ -252,70 +254,6 @@ export function PlainSheet(props: {
         {isLast ? `${asBefore}Next plain stretch` : 'Done'}
       </button>
     </div>
-  )
-}
-
-function PlainKey(props: {
-  label: string
-  given: boolean
-  /** Why it is off. */
-  why: string | null
-  press(): void
-  /** Pressed sooner than anyone can look. */
-  hasty?: boolean | undefined
-  /** Where the answer is given while this key is off. */
-  instead?: { label: string; press(): void } | undefined
-}) {
-  return (
-    <>
-      <button
-        type="button"
-        class="key wide"
-        aria-pressed={props.given}
-        aria-label={props.label}
-        disabled={props.why !== null}
-        onClick={props.press}
-      >
-        <span class="tick" aria-hidden="true">
-          {props.given ? '✓' : ''}
-        </span>
-        {props.label}
-      </button>
-      {props.why && <p class="soft">{props.why}</p>}
-      {props.hasty && <p class="soft">Too quick: walk it, look, and press again.</p>}
-      {props.why && props.instead && (
-        <button type="button" class="key wide" onClick={props.instead.press}>
-          {props.instead.label}
-        </button>
-      )}
-    </>
-  )
-}
-
-function StickLength(props: { stick: string; choose(stick: string): void }) {
-  const [text, setText] = useState(props.stick)
-  const value = Number(text.replace(',', '.'))
-  const fits = Number.isFinite(value) && value >= 0.5 && value <= 3
-  return (
-    <details>
-      <summary>Another stick</summary>
-      <label class="plain-field">
-        Length of your stick, m
-        <input
-          inputMode="decimal"
-          value={text}
-          aria-invalid={!fits}
-          onInput={(event) => {
-            setText(event.currentTarget.value)
-            const typed = Number(event.currentTarget.value.replace(',', '.'))
-            if (!(typed >= 0.5 && typed <= 3)) return
-            remember('stick', String(typed))
-            props.choose(String(typed))
-          }}
-        />
-      </label>
-      {!fits && <p class="soft">From 0.5 to 3 m, for example 1.05.</p>}
-    </details>
   )
 }
 
