@@ -3,6 +3,7 @@ import { createReadStream, existsSync, statSync } from 'node:fs'
 import { createServer } from 'node:http'
 import { dirname, extname, join, normalize, sep } from 'node:path'
 import { fileURLToPath } from 'node:url'
+import { createGzip } from 'node:zlib'
 
 const root = join(dirname(fileURLToPath(import.meta.url)), '..', 'dist')
 const port = Number(process.env.PORT ?? 4173)
@@ -30,15 +31,17 @@ const server = createServer((request, response) => {
     response.end(file ? 'Only GET and HEAD.\n' : 'No such file.\n')
     return
   }
+  const zips = /\bgzip\b/.test(request.headers['accept-encoding'] ?? '') && extname(file) !== '.png'
   response.writeHead(200, {
     'content-type': types[extname(file)] ?? 'application/octet-stream',
-    'content-length': statSync(file).size,
+    ...(zips ? { 'content-encoding': 'gzip', vary: 'accept-encoding' } : { 'content-length': statSync(file).size }),
     // Files under assets/ carry a hash of their content in their names; everything else is asked for anew.
     'cache-control': file.startsWith(join(root, 'assets') + sep) ? 'public, max-age=31536000, immutable' : 'no-store',
     'x-content-type-options': 'nosniff',
     'referrer-policy': 'no-referrer',
   })
   if (request.method === 'HEAD') response.end()
+  else if (zips) createReadStream(file).pipe(createGzip()).pipe(response)
   else createReadStream(file).pipe(response)
 })
 

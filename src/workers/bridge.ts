@@ -3,8 +3,8 @@ import type { Survey } from '../record/survey.ts'
 import type { FromJudge, Memo, ToJudge } from './messages.ts'
 
 /**
- * The only door to the workers. One worker, one queue: questions are answered one after the other in the order asked,
- * and one that is cancelled before its turn is never begun.
+ * The only door to the workers. One worker, one question at a time, the newest first: what a person looks at now is judged
+ * before what they left. A question that is interrupted is taken up again; the planner remembers what it had solved.
  */
 export type Answer = { ok: true; assessment: Assessment } | { ok: false; problem: string }
 
@@ -14,26 +14,6 @@ export interface Running {
   cancel(): void
 }
 
-interface Question {
-  ask: Extract<ToJudge, { kind: 'judge' }>
-  tell(progress: JudgeProgress): void
-  settle(answer: Answer | null): void
-}
-
-let worker: Worker | null = null
-let numbered = 0
-const waiting: Question[] = []
-let current: Question | null = null
-
-/** Judges every walk of a survey as on a day. */
-export function judge(survey: Survey, on: string, tell: (progress: JudgeProgress) => void): Running {
-  const question = ++numbered
-  const { promise, settle } = open()
-  waiting.push({ ask: { kind: 'judge', question, survey, on }, tell, settle })
-  next()
-  return { answer: promise, cancel: () => cancel(question) }
-}
-
 /** Where the planner's memory is kept between one page and the next. */
 export interface MemoKeeper {
   read(): Promise<Memo>
@@ -41,25 +21,59 @@ export interface MemoKeeper {
   forget(): Promise<void>
 }
 
+interface Question {
+  survey: Survey
+  on: string
+  tell(progress: JudgeProgress): void
+  settle(answer: Answer | null): void
+}
+
+let worker: Worker | null = null
 let keeper: MemoKeeper | null = null
+/** The question in the worker, under a number of its own for each time it is asked. */
+let current: { question: Question; number: number } | null = null
+let numbered = 0
+/** The last is the next. */
+const waiting: Question[] = []
 
 /** Gives the judge a memory; to be called once, before the first question. */
 export function keepMemoWith(one: MemoKeeper): void {
   keeper = one
 }
 
-function open(): { promise: Promise<Answer | null>; settle: (answer: Answer | null) => void } {
-  let settle: (answer: Answer | null) => void = () => {}
-  const promise = new Promise<Answer | null>((resolve) => {
+/** Judges every walk of a survey as on a day. */
+export function judge(survey: Survey, on: string, tell: (progress: JudgeProgress) => void): Running {
+  let settle: Question['settle'] = () => {}
+  const answer = new Promise<Answer | null>((resolve) => {
     settle = resolve
   })
-  return { promise, settle }
+  const question: Question = { survey, on, tell, settle }
+  if (current) {
+    waiting.push(current.question)
+    stop(current.number)
+  }
+  waiting.push(question)
+  next()
+  return { answer, cancel: () => cancel(question) }
+}
+
+function cancel(question: Question) {
+  const place = waiting.indexOf(question)
+  if (place >= 0) waiting.splice(place, 1)
+  else if (current?.question === question) stop(current.number)
+  question.settle(null)
+}
+
+function stop(number: number) {
+  worker?.postMessage({ kind: 'cancel', question: number } satisfies ToJudge)
 }
 
 function next() {
   if (current) return
-  current = waiting.shift() ?? null
-  if (current) void post(current.ask)
+  const question = waiting.pop()
+  if (!question) return
+  current = { question, number: ++numbered }
+  void post({ kind: 'judge', question: current.number, survey: question.survey, on: question.on })
 }
 
 /** A new worker is first told what was worked out before. */
@@ -73,14 +87,13 @@ async function post(ask: ToJudge) {
   asked.postMessage(ask)
 }
 
-function cancel(question: number) {
-  const place = waiting.findIndex(({ ask }) => ask.question === question)
-  if (place >= 0) waiting.splice(place, 1)[0]?.settle(null)
-  else if (current?.ask.question === question) worker?.postMessage({ kind: 'cancel', question } satisfies ToJudge)
-}
-
+/** Null: stopped, because its asker wants it no more or because a newer one came; then it waits in the queue. */
 function finish(answer: Answer | null) {
-  current?.settle(answer)
+  if (current && answer) {
+    const place = waiting.indexOf(current.question)
+    if (place >= 0) waiting.splice(place, 1)
+    current.question.settle(answer)
+  }
   current = null
   next()
 }
@@ -90,8 +103,8 @@ function start(): Worker {
   started.addEventListener('message', ({ data }: MessageEvent<FromJudge>) => {
     if (data.kind === 'learned') return keeper?.keep(data.memo)
     if (data.kind === 'outdated') return void keeper?.forget()
-    if (!current || data.question !== current.ask.question) return
-    if (data.kind === 'progress') current.tell(data.progress)
+    if (data.question !== current?.number) return
+    if (data.kind === 'progress') current.question.tell(data.progress)
     else if (data.kind === 'done') finish({ ok: true, assessment: data.assessment })
     else if (data.kind === 'cancelled') finish(null)
     else finish({ ok: false, problem: data.problem })

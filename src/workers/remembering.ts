@@ -10,7 +10,8 @@ export interface Remembering {
 
 /**
  * A planner that solves no scene twice. `version` stands in every key, so that an answer of an older planner is never
- * taken for one of this.
+ * taken for one of this. Of a motion only the samples with a slack leash are kept, from the first answer on: the
+ * judgement reads no others, and a phone keeps thousands.
  */
 export function remembering(planner: Planner, version: string): Remembering {
   const known = new Map<string, ClearanceAnswer>()
@@ -20,7 +21,7 @@ export function remembering(planner: Planner, version: string): Remembering {
       const key = `${version} ${JSON.stringify([scene, bodies, separation, options ?? {}])}`
       const before = known.get(key)
       if (before) return before
-      const answer = planner(scene, bodies, separation, options)
+      const answer = slim(planner(scene, bodies, separation, options))
       known.set(key, answer)
       fresh.set(key, answer)
       return answer
@@ -39,4 +40,16 @@ export function remembering(planner: Planner, version: string): Remembering {
       return learned
     },
   }
+}
+
+/** Numbers a sample, the last of them 1 while the leash hangs slack. */
+const fields = 6
+
+function slim(answer: ClearanceAnswer): ClearanceAnswer {
+  const samples = answer.motion?.samples
+  if (!samples) return { ...answer, tautMotion: null }
+  const slack: number[] = []
+  for (let at = 0; at + fields <= samples.length; at += fields)
+    if (samples[at + fields - 1] === 1) slack.push(...samples.subarray(at, at + fields))
+  return { ...answer, motion: { samples: Float64Array.from(slack) }, tautMotion: null }
 }

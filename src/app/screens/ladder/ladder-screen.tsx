@@ -60,13 +60,13 @@ function Ladder({ walk }: { walk: WalkResult }) {
           <p key={sentence}>{sentence}</p>
         ))}
       </section>
+      <p id="ladder-key" class="soft">
+        Room left at the worst check of each part, as a share of what there is. A cell without a figure has no such
+        check.
+      </p>
       {/* biome-ignore lint/a11y/noNoninteractiveTabindex: a table wider than the screen is scrolled by keyboard */}
       <section class="ladder-scroll" aria-label="Ladder, scrolls sideways" tabIndex={0}>
-        <table class="ladder">
-          <caption class="soft">
-            Room left at the worst check of each part, as a share of what there is. A cell without a figure has no such
-            check.
-          </caption>
+        <table class="ladder" aria-describedby="ladder-key">
           <thead>
             <tr>
               <th scope="col">Part</th>

@@ -1,7 +1,7 @@
 import { useEffect, useState } from 'preact/hooks'
 import { worstVerdict } from '../../../judge/worst.ts'
 import { allFacts } from '../../../record/log.ts'
-import { dayAndHour } from '../../components/day-words.ts'
+import { dayAndHour, dayWords } from '../../components/day-words.ts'
 import { VerdictMark } from '../../components/verdict-mark.tsx'
 import { openSession } from '../../state/open-session.ts'
 import type { Session } from '../../state/session.ts'
@@ -35,6 +35,16 @@ export function VenueRow({ row }: { row: OnPhone }) {
 
 function Worst({ session }: { session: Session }) {
   const judgement = session.judgement.value
+  const [expires, setExpires] = useState<string | null>(null)
+  const { assessment, stale } = judgement
+  useEffect(() => {
+    if (!assessment || stale) return
+    // The first page is drawn without the catalogue; this line needs it.
+    void import('../../state/expiry.ts').then(({ firstToExpire }) => {
+      const first = firstToExpire(session.survey.value, assessment)
+      setExpires(first && expiryWords(first, assessment.on))
+    })
+  }, [assessment, stale])
   if (session.survey.value.view.walks.length === 0) return null
   if (judgement.problem) return <p>{judgement.problem}</p>
   if (judgement.stale) return <p class="soft">Judging</p>
@@ -49,6 +59,7 @@ function Worst({ session }: { session: Session }) {
         {judgement.walks.length > 1 ? 'the worst of them: ' : ''}
         {at.name}
       </p>
+      {expires && <p class="soft">{expires}</p>}
     </div>
   ) : null
 }
@@ -60,4 +71,10 @@ function waiting(facts: number, copy: Copy | null): string {
   return newer <= 0
     ? `All of it is in the file of ${dayAndHour(copy.at)}.`
     : `${newer} entries since the file of ${dayAndHour(copy.at)} are only on this phone.`
+}
+
+function expiryWords({ walk, last }: { walk: string; last: string }, on: string): string {
+  return last < on
+    ? `Stale since ${dayWords(last)}: ${walk}. Look again.`
+    : `First to go stale, after ${dayWords(last)}: ${walk}`
 }
