@@ -1,7 +1,7 @@
 import type { FastifyRequest } from 'fastify'
 import type { FastifyInstance } from './fastify.ts'
 import type { Caller, Office } from './office.ts'
-import { Refusal } from './refusal.ts'
+import { notFound, Refusal } from './refusal.ts'
 import { callerOf } from './repositories/people.ts'
 import { expectOwnOrNew, expectSurvey } from './repositories/surveys.ts'
 
@@ -49,6 +49,8 @@ export function guard(app: FastifyInstance, office: Office): DeclaredRoute[] {
         'Ask an administrator.',
       )
     const { survey } = request.params as { survey?: string }
+    // Looked up before the schema is: no database keeps an id with a NUL.
+    if (survey?.includes('\0')) throw notFound('This survey')
     if (rule.survey && survey === undefined) throw new Error('office/no-survey: the route names no survey')
     if (rule.survey === 'own') await expectSurvey(office.db, branch, survey as string)
     if (rule.survey === 'own-or-new') await expectOwnOrNew(office.db, branch, survey as string)

@@ -35,7 +35,8 @@ export interface OfficeUnderTest {
   clock: { now: number }
   branch: string
   log: string[]
-  ask(who: Person | null, method: string, url: string, body?: unknown): Promise<Answer>
+  /** `from`: the address it comes from; a new one each time unless given, so that no limit by address is met by chance. */
+  ask(who: Person | null, method: string, url: string, body?: unknown, from?: string): Promise<Answer>
   person(role: Role, name?: string, branch?: string): Promise<Person>
   close(): Promise<void>
 }
@@ -94,10 +95,13 @@ export async function startOffice(engine: Engine, wishes: Wishes = {}): Promise<
     wishes.more,
   )
   const branch = await addBranch(office.db, 'North', clock.now)
-  const ask: OfficeUnderTest['ask'] = async (who, method, path, body) => {
+  let asked = 0
+  const ask: OfficeUnderTest['ask'] = async (who, method, path, body, from) => {
+    asked++
     const reply = await app.inject({
       method: method as 'GET',
       url: path,
+      remoteAddress: from ?? `10.${(asked >> 16) & 255}.${(asked >> 8) & 255}.${asked & 255}`,
       headers: {
         ...(who ? { authorization: `Bearer ${who.token}` } : {}),
         ...(body === undefined
