@@ -73,7 +73,7 @@ export const clearance: Planner = (scene, bodies, separation, options = {}) => {
 }
 
 /** Passes over the field, each a look at every state twice. */
-const usualCap = 400
+const usualCap = 4000
 
 /** Optimistic end: the value on the grid with its shortfall, or what was proved with a margin where polishing took hold. */
 function highOf(quest: Quest, taut: TautResult): Metres {

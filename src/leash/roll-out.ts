@@ -1,9 +1,10 @@
 import { holds } from '../geometry/polygon-check.ts'
 import type { Scene } from '../geometry/scene.ts'
 import type { Metres, Radians } from '../units/quantity.ts'
+import type { Field } from './field.ts'
 import { arcFrom, type Node } from './nodes.ts'
 import { directionOf, directions } from './tables.ts'
-import { type Field, inside, linked, sample } from './value.ts'
+import { sample } from './value.ts'
 
 /** A motion may dip this far under the level where the grid, not the place, makes it; each metre of dip is dear. */
 const dip = 0.05
@@ -33,14 +34,14 @@ export function costToGo(
   below?: Layer,
   banned?: Uint8Array,
 ): Float32Array {
-  const { count, goal, first, last } = field
-  const cost = new Float32Array(count * directions * 2).fill(unreachable)
-  for (let at = 0; at < count; at++) {
-    const paused = below && !goal[at] && !banned?.[at] ? pauseFrom(field, below, at).cost : unreachable
-    for (let k = 0; k < directions; k++)
-      for (let state = (k * count + at) * 2, end = state + 2; state < end; state++)
-        if ((first[state] as number) <= (last[state] as number) && (value[state] as number) >= level - dip)
-          cost[state] = goal[at] ? 0 : paused
+  const { goal, place } = field
+  const cost = new Float32Array(value.length).fill(unreachable)
+  const paused = below ? pausesFrom(field, below) : null
+  for (let s = 1; s < cost.length; s++) {
+    if ((value[s] as number) < level - dip) continue
+    const at = place[s] as number
+    if (goal[at]) cost[s] = 0
+    else if (paused && !banned?.[at]) cost[s] = Math.min(unreachable, (paused[at] as number) + pauseCost)
   }
   for (let pass = 0; pass < most; pass++) {
     let lowered = false
@@ -53,83 +54,79 @@ export function costToGo(
   return cost
 }
 
-/** The cheapest state of the layer below at a node, and what it costs to pause there and go on from it. */
-function pauseFrom(field: Field, below: Layer, at: number): { cost: number; state: number } {
-  let cost = unreachable
-  let state = -1
-  for (let k = 0; k < directions; k++)
-    for (let s = (k * field.count + at) * 2, end = s + 2; s < end; s++)
-      if ((below.cost[s] as number) < cost) {
-        cost = below.cost[s] as number
-        state = s
-      }
-  return { cost: Math.min(unreachable, cost + pauseCost), state }
+/** Least cost of the layer below over all directions of each node. */
+function pausesFrom(field: Field, below: Layer): Float32Array {
+  const least = new Float32Array(field.count).fill(unreachable)
+  for (let s = 1; s < below.cost.length; s++) {
+    const at = field.place[s] as number
+    if ((below.cost[s] as number) < (least[at] as number)) least[at] = below.cost[s] as number
+  }
+  return least
 }
 
-/** Least cost over the runs of a state that overlap [from, to]. */
-function cheapest(field: Field, cost: Float32Array, state: number, from: number, to: number): number {
+/** The cheapest state of the layer below at a node, and what it costs to pause there and go on from it. */
+function pauseFrom(field: Field, below: Layer, at: number): { cost: number; state: number; k: number } {
+  const best = { cost: unreachable, state: 0, k: 0 }
+  for (let k = 0; k < directions; k++)
+    for (let run = 0; run < 2; run++) {
+      const s = field.slot[(k * field.count + at) * 2 + run] as number
+      if (s === 0 || (below.cost[s] as number) + pauseCost >= best.cost) continue
+      best.cost = (below.cost[s] as number) + pauseCost
+      best.state = s
+      best.k = k
+    }
+  return best
+}
+
+/** Least cost over the runs of a direction's node that overlap [from, to]. */
+function cheapest(field: Field, cost: Float32Array, cell: number, from: number, to: number): number {
+  const { slot, first, last } = field
   let best = unreachable
-  for (let s = state; s < state + 2; s++) {
-    const start = field.first[s] as number
-    const end = field.last[s] as number
-    if (start > end || start > to || end < from) continue
-    const value = cost[s] as number
-    if (value < best) best = value
+  for (let run = 0; run < 2; run++) {
+    const s = slot[cell * 2 + run] as number
+    if (s === 0 || (first[s] as number) > to || (last[s] as number) < from) continue
+    if ((cost[s] as number) < best) best = cost[s] as number
   }
   return best
 }
 
 function lowerDirection(field: Field, value: Float32Array, cost: Float32Array, level: Metres, k: number): boolean {
-  const { count, columns, rows, first, last, goal } = field
-  const left = ((k + 1) % directions) * count
-  const right = ((k + directions - 1) % directions) * count
-  const here = k * count
+  const { links, begin, place, goal } = field
   const swing = directionOf(1)
-  const ahead = field.ahead[k] as number
-  const aside = field.aside[k] as number
   const weight = field.weight[k] as number
   const step = (field.way[k] as number) * metre
-  const c = Math.cos(directionOf(k))
-  const s = Math.sin(directionOf(k))
+  const from = begin[k] as number
+  const end = begin[k + 1] as number
+  const down = field.downwards[k] === 1
   let lowered = false
-  for (let jj = 0; jj < rows; jj++) {
-    const j = s > 0 ? rows - 1 - jj : jj
-    for (let ii = 0; ii < columns; ii++) {
-      const i = c > 0 ? columns - 1 - ii : ii
-      const at = j * columns + i
-      if (goal[at]) continue
-      for (let run = 0; run < 2; run++) {
-        const state = (here + at) * 2 + run
-        const held = value[state] as number
-        if (held < level - dip) continue
-        const under = dipCost * Math.max(0, level - held)
-        const from = first[state] as number
-        const to = last[state] as number
-        if (from > to) continue
-        const old = cost[state] as number
-        let best =
-          Math.min(
-            cheapest(field, cost, (left + at) * 2, from - 1, to - 1),
-            cheapest(field, cost, (right + at) * 2, from + 1, to + 1),
-          ) + swing
-        if (inside(i, j, columns, rows, c, s)) {
-          const one = (here + at + ahead) * 2
-          const other = (here + at + aside) * 2
-          const reached =
-            linked(field, value, one, from, to) * (1 - weight) +
-            (weight > 0 ? linked(field, value, other, from, to) * weight : 0)
-          if (reached >= level - dip)
-            best = Math.min(
-              best,
-              mix(cheapest(field, cost, one, from, to), cheapest(field, cost, other, from, to), weight) + step,
-            )
-        }
-        best += under
-        if (best < old - 1e-6) {
-          cost[state] = best
-          lowered = true
-        }
-      }
+  for (let n = from; n < end; n++) {
+    const s = down ? from + end - 1 - n : n
+    const held = value[s] as number
+    if (held < level - dip || goal[place[s] as number]) continue
+    const at = s << 3
+    let best =
+      Math.min(
+        cost[links[at] as number] as number,
+        cost[links[at + 1] as number] as number,
+        cost[links[at + 2] as number] as number,
+        cost[links[at + 3] as number] as number,
+      ) + swing
+    const a0 = links[at + 4] as number
+    const a1 = links[at + 5] as number
+    const b0 = links[at + 6] as number
+    const b1 = links[at + 7] as number
+    const reached =
+      Math.max(value[a0] as number, value[a1] as number) * (1 - weight) +
+      Math.max(value[b0] as number, value[b1] as number) * weight
+    if (reached >= level - dip) {
+      const one = Math.min(cost[a0] as number, cost[a1] as number)
+      const other = Math.min(cost[b0] as number, cost[b1] as number)
+      best = Math.min(best, mix(one, other, weight) + step)
+    }
+    if (held < level) best += dipCost * (level - held)
+    if (best < (cost[s] as number) - 1e-5) {
+      cost[s] = best
+      lowered = true
     }
   }
   return lowered
@@ -162,7 +159,7 @@ function costAt(field: Field, cost: Float32Array, x: Metres, y: Metres, k: numbe
     [at + field.columns, (1 - wx) * wy],
     [at + field.columns + 1, wx * wy],
   ] as const) {
-    const value = cheapest(field, cost, node * 2, from, to)
+    const value = cheapest(field, cost, node, from, to)
     if (value >= unreachable) continue
     sum += value * w
     weight += w
@@ -195,12 +192,13 @@ function runAt(
       const ey = field.y0 + (j + dj) * grid.dy - y
       const far = ex * ex + ey * ey
       if (far >= nearest) continue
-      const state = (k * field.count + (j + dj) * field.columns + i + di) * 2
+      const cell = k * field.count + (j + dj) * field.columns + i + di
       let least = unreachable
-      for (let s = state; s < state + 2; s++) {
+      for (let run = 0; run < 2; run++) {
+        const s = field.slot[cell * 2 + run] as number
         const start = field.first[s] as number
         const end = field.last[s] as number
-        if (start > end || start > to || end < from || (cost[s] as number) >= least) continue
+        if (s === 0 || start > to || end < from || (cost[s] as number) >= least) continue
         best = [start, end]
         least = cost[s] as number
         nearest = far
@@ -255,7 +253,7 @@ export function rollOut(
         const paused = pauseFrom(field, below, at)
         if (paused.cost < unreachable && paused.cost <= move.total + 1e-3) {
           n--
-          k = Math.floor(paused.state / 2 / field.count)
+          k = paused.k
           run = [field.first[paused.state] as number, field.last[paused.state] as number]
           nodes = [{ ...here, psi: k * slot, heading: (k + (run[0] + run[1]) / 2) * slot }]
           rolled.stretches.push(nodes)

@@ -3,14 +3,15 @@ import type { Scene } from '../geometry/scene.ts'
 import type { Metres, Radians } from '../units/quantity.ts'
 import type { Bodies, Motion } from './answer.ts'
 import { type Certificate, certify } from './certify.ts'
+import { type Field, fieldOf } from './field.ts'
 import { assignHeadings } from './headings.ts'
 import type { PoseTerms } from './margins.ts'
 import { motionOf, type Node, refine } from './nodes.ts'
 import { polish, usualStages } from './polish.ts'
 import { costToGo, rollOut } from './roll-out.ts'
-import { directions, type Tables } from './tables.ts'
+import { directions, floor, type Tables } from './tables.ts'
 import { reachOf } from './team.ts'
-import { type Field, fieldOf, raise, sample } from './value.ts'
+import { goalValues, raise, sample } from './value.ts'
 
 /** A motion with its certificate. */
 export interface Found {
@@ -70,18 +71,18 @@ export interface TautResult {
   found: Found | null
   /** Value of the start on the grid, metres; the truth lies above it by the shortfall at most. */
   value: Metres
-  field: Field
   /** False where the cap on passes was reached. */
   settled: boolean
 }
 
 /** The taut search: value function, roll-out, polishing, proof. `passes` caps the work and is counted down. */
 export function searchTaut(quest: Quest, passes: Passes): TautResult {
-  let { field, value, settled } = settledField(quest, 0, passes)
+  let { field, taut, value, settled } = settledField(quest, 0, floor, passes)
   // The runs of headings are right at the level they were cut at: cut them again at the value found.
   if (value > 0.02) {
-    const again = settledField(quest, value, passes)
+    const again = settledField(quest, value, value - depth, passes)
     field = again.field
+    taut = again.taut
     settled = again.settled && settled
     value = Math.min(value, again.value)
   }
@@ -90,26 +91,30 @@ export function searchTaut(quest: Quest, passes: Passes): TautResult {
     for (const below of [0.01, 0.03]) {
       if (found && found.certificate.clearance > value) break
       const level = value - below
-      const cost = costToGo(field, field.value, level, 16)
+      const cost = costToGo(field, taut, level, 60)
       const { x, y, heading } = quest.scene.start
-      const rolled = rollOut(quest.scene, field, [{ value: field.value, cost }], level, { x, y, psi: heading })
+      const rolled = rollOut(quest.scene, field, [{ value: taut, cost }], level, { x, y, psi: heading })
       const rough = rolled && headed(quest, rolled.stretches[0] as Node[], level)
       if (rough) found = better(found, polishAndProve(quest, rough))
     }
-  return { found, value, field, settled }
+  return { found, value, settled }
 }
+
+/** How far below the value looked for a state is still told apart: a roll-out dips no deeper. Metres. */
+export const depth = 0.1
 
 /** Work still allowed, in passes over a field. */
 export interface Passes {
   left: number
 }
 
-/** A field with its taut values, runs of headings cut at `tau`, and the value of the start. */
-export function settledField(quest: Quest, tau: Metres, passes: Passes) {
+/** A field with its taut values, runs of headings cut at `tau`, states from `least` up, and the value of the start. */
+export function settledField(quest: Quest, tau: Metres, least: Metres, passes: Passes) {
   const window = Math.min(directions / 2, Math.floor((quest.phi / (2 * Math.PI)) * directions + 1e-9))
-  const field = fieldOf(quest.scene, quest.tables, quest.separation, window, tau)
-  const settled = settle(field, field.value, passes)
-  return { field, settled, value: startValue(quest, field, field.value) }
+  const field = fieldOf(quest.scene, quest.tables, quest.separation, window, tau, least)
+  const taut = goalValues(field)
+  const settled = settle(field, taut, passes)
+  return { field, taut, settled, value: startValue(quest, field, taut) }
 }
 
 export function startValue(quest: Quest, field: Field, value: Float32Array): Metres {
@@ -118,7 +123,7 @@ export function startValue(quest: Quest, field: Field, value: Float32Array): Met
 }
 
 export function settle(field: Field, value: Float32Array, passes: Passes): boolean {
-  const most = Math.max(0, Math.min(16, passes.left))
+  const most = Math.max(0, Math.min(80, passes.left))
   const used = raise(field, value, most)
   passes.left -= Math.min(used, most)
   return used <= most

@@ -1,9 +1,11 @@
 import type { Metres } from '../units/quantity.ts'
+import type { Field } from './field.ts'
 import type { Node } from './nodes.ts'
 import { pauseWay } from './pause.ts'
 import { costToGo, type Layer, type Rolled, rollOut } from './roll-out.ts'
 import {
   better,
+  depth,
   type Found,
   headed,
   type Passes,
@@ -14,7 +16,8 @@ import {
   shortfall,
   startValue,
 } from './search.ts'
-import { type Field, withPause } from './value.ts'
+import { floor } from './tables.ts'
+import { withPause } from './value.ts'
 
 /** At most so many pauses; more is no guiding. */
 export const mostPauses = 3
@@ -35,53 +38,54 @@ export interface SlackResult {
  */
 export function searchSlack(quest: Quest, taut: Found | null, enough: Metres, passes: Passes): SlackResult {
   const found: (Found | null)[] = [taut]
-  let highest = Number.NEGATIVE_INFINITY
-  let settled = true
+  const worth = (n: number) => found[n]?.certificate.clearance ?? Number.NEGATIVE_INFINITY
+  // A first look with headings cut at zero says how much each pause may gain at most.
+  const base = settledField(quest, 0, floor, passes)
+  const none = new Uint8Array(base.field.count)
+  const first = layersOf(quest, base.field, base.taut, mostPauses, none, passes)
+  let settled = base.settled && first.settled
+  const values = first.layers.map((layer) => startValue(quest, base.field, layer))
+  let cut: Cut | null = null
   for (let n = 1; n <= mostPauses; n++) {
     const before = found[n - 1] ?? null
-    const reached = before?.certificate.clearance ?? Number.NEGATIVE_INFINITY
-    if (reached >= enough - 0.003) {
-      found.push(before)
-      highest = Math.max(highest, reached)
-      continue
+    found.push(before)
+    const value = values[n] as number
+    if (worth(n) >= enough - 0.003 || value + shortfall(quest.separation) < 0) continue
+    if (n > 1 && value < (values[n - 1] as number) + 0.003 && worth(n) >= (values[n - 1] as number)) continue
+    if (!cut || Math.abs(cut.tau - value) > 0.01) {
+      const tau = Math.max(0, value)
+      const again = tau > 0.02 ? settledField(quest, tau, value - depth, passes) : base
+      settled = settled && again.settled
+      cut = { field: again.field, taut: again.taut, tau: value, banned: new Uint8Array(again.field.count) }
     }
-    const layered = searchWith(quest, n, passes)
+    const layered = searchWith(quest, n, cut, passes)
     settled = settled && layered.settled
-    highest = Math.max(highest, layered.value)
-    found.push(better(before, layered.found))
+    found[n] = better(before, layered.found)
   }
-  return { found, value: highest, settled }
+  return { found, value: Math.max(...values), settled }
 }
 
-function searchWith(quest: Quest, n: number, passes: Passes): { found: Found | null; value: Metres; settled: boolean } {
+/** A field whose headings were cut at a level, and where pauses were found impossible at it. */
+interface Cut {
+  field: Field
+  taut: Float32Array
+  tau: Metres
+  banned: Uint8Array
+}
+
+function searchWith(quest: Quest, n: number, cut: Cut, passes: Passes): { found: Found | null; settled: boolean } {
+  const { field, banned } = cut
   let settled = true
-  let optimistic = Number.NEGATIVE_INFINITY
-  let tau = 0
-  let field: Field | null = null
-  let banned = new Uint8Array(0)
-  // The level at which headings fall into runs is first guessed from a field cut at zero.
-  for (let round = 0; round < 2; round++) {
-    const base = settledField(quest, tau, passes)
-    field = base.field
-    banned = new Uint8Array(field.count)
-    const values = layersOf(quest, field, n, banned, passes)
-    settled = settled && values.settled && base.settled
-    const value = startValue(quest, field, values.layers[n] as Float32Array)
-    optimistic = round === 0 ? value : Math.min(optimistic, value)
-    if (optimistic <= 0.02) break
-    tau = optimistic
-  }
-  if (!field || optimistic + shortfall(quest.separation) < 0) return { found: null, value: optimistic, settled }
   let found: Found | null = null
   for (let ban = 0; ban <= mostBans; ban++) {
-    const values = layersOf(quest, field, n, banned, passes)
+    const values = layersOf(quest, field, cut.taut, n, banned, passes)
     settled = settled && values.settled
     const value = startValue(quest, field, values.layers[n] as Float32Array)
     if (value + shortfall(quest.separation) < 0 || (found && found.certificate.clearance >= value)) break
     const level = value - 0.01
     const layers: Layer[] = []
     for (const [i, layer] of values.layers.entries())
-      layers.push({ value: layer, cost: costToGo(field, layer, level, 16, layers[i - 1], banned) })
+      layers.push({ value: layer, cost: costToGo(field, layer, level, 60, layers[i - 1], banned) })
     const { x, y, heading } = quest.scene.start
     const rolled = rollOut(quest.scene, field, layers, level, { x, y, psi: heading }, banned)
     if (!rolled) break
@@ -91,15 +95,21 @@ function searchWith(quest: Quest, n: number, passes: Passes): { found: Found | n
       continue
     }
     found = better(found, polishAndProve(quest, joined))
-    if (found && found.certificate.clearance >= level) break
+    if ((found && found.certificate.clearance >= level) || rolled.pausedAt.length === 0) break
     for (const at of rolled.pausedAt) banAround(field, banned, at)
-    if (rolled.pausedAt.length === 0) break
   }
-  return { found, value: optimistic, settled }
+  return { found, settled }
 }
 
-function layersOf(quest: Quest, field: Field, n: number, banned: Uint8Array, passes: Passes) {
-  const layers: Float32Array[] = [field.value]
+function layersOf(
+  quest: Quest,
+  field: Field,
+  taut: Float32Array,
+  n: number,
+  banned: Uint8Array,
+  passes: Passes,
+): { layers: Float32Array[]; settled: boolean } {
+  const layers: Float32Array[] = [taut]
   let settled = true
   for (let i = 1; i <= n; i++) {
     const value = withPause(field, layers[i - 1] as Float32Array, banned, quest.drift)
