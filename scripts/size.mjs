@@ -1,5 +1,5 @@
 // The size budget: gzip kB of script before the strip can be used, and of all that is kept on the phone beforehand.
-import { readFileSync, statSync } from 'node:fs'
+import { readFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { gzipSync } from 'node:zlib'
 
@@ -32,11 +32,11 @@ const worker = readFileSync(join(dist, 'sw.js'), 'utf8')
 const precached = [
   ...new Set([...worker.matchAll(/["']?url["']?\s*:\s*["'`]([^"'`]+)["'`]/g)].map((match) => match[1])),
 ]
-const kept = precached.reduce((sum, file) => sum + kB(statSync(join(dist, file)).size), 0)
+const kept = precached.reduce((sum, file) => sum + gzipped(file), 0)
 
 const rows = [
   { what: 'script before the strip can be used, gzip', kB: strip, budget: stripBudget },
-  { what: `kept on the phone beforehand, ${precached.length} files`, kB: kept, budget: precacheBudget },
+  { what: `kept on the phone beforehand, as sent (gzip), ${precached.length} files`, kB: kept, budget: precacheBudget },
 ]
 for (const row of rows) console.log(`${row.kB.toFixed(1).padStart(7)} kB of ${row.budget}  ${row.what}`)
 if (precached.length === 0 || rows.some((row) => row.kB > row.budget)) process.exit(1)

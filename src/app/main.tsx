@@ -6,4 +6,4 @@ import { watchForUpdate } from './state/update-ready.ts'
 const place = document.getElementById('app')
 if (!place) throw new Error('app/no-place: index.html has no element with the id "app"')
 render(<App />, place)
-watchForUpdate()
+void watchForUpdate()

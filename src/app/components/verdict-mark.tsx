@@ -23,7 +23,7 @@ export function VerdictMark(props: { verdict: Verdict; detail?: string | null; l
 export function VerdictSwatch({ verdict }: { verdict: Verdict }) {
   const dashed = verdict === 'not-known' ? '5 4' : undefined
   return (
-    <svg class={`verdict-${verdict}`} width="46" height="24" viewBox="0 0 46 24" aria-hidden="true">
+    <svg class={`verdict-swatch verdict-${verdict}`} viewBox="0 0 46 24" aria-hidden="true">
       <rect
         x="1.5"
         y="1.5"

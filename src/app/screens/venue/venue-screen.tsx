@@ -28,7 +28,8 @@ export function VenueScreen({ session }: { session: Session }) {
   const judgement = session.judgement.value
   const results = judgement.stale ? [] : judgement.walks
   const undo = session.undoLabel.value
-  const [planOpen, setPlanOpen] = useState(false)
+  // A desk has room for it from the start; a phone loads it when it is asked for.
+  const [planOpen, setPlanOpen] = useState(() => matchMedia('(min-width: 60rem)').matches)
 
   return (
     <main class="page wide">
@@ -80,7 +81,7 @@ export function VenueScreen({ session }: { session: Session }) {
           <KeyLink href={`/venue/${survey.survey}/team`}>Team card</KeyLink>
           <FileKeys session={session} say={act.say} />
         </div>
-        <details onToggle={(event) => setPlanOpen((event.currentTarget as HTMLDetailsElement).open)}>
+        <details open={planOpen} onToggle={(event) => setPlanOpen((event.currentTarget as HTMLDetailsElement).open)}>
           <summary>Plan</summary>
           {planOpen && <PlanPart view={view} results={results} />}
         </details>
