@@ -147,6 +147,7 @@ describe('what is left', () => {
       text: 'with cautions',
       detail: 'Width governs.',
       complete: true,
+      verdict: 'with-cautions',
     })
     expect(partLine(one, view(one), judged, true).text).toBe('Complete, being judged')
   })

@@ -1,4 +1,4 @@
-import type { Check, SegmentResult } from '../../../judge/result.ts'
+import type { Check, SegmentResult, Verdict } from '../../../judge/result.ts'
 import { type Missing, soFar } from '../../../judge/so-far.ts'
 import { type Item, items, neverInherited } from '../../../record/answers.ts'
 import type { Segment, SurveyView } from '../../../record/survey.ts'
@@ -11,6 +11,8 @@ export interface PartLine {
   /** Names of what is left, or the governing sentence of a complete part. */
   detail: string
   complete: boolean
+  /** Of a complete part, when the judge has spoken. */
+  verdict: Verdict | null
 }
 
 /** While answers are missing there is no verdict word; while a newer judgement is made the old one says so. */
@@ -31,12 +33,17 @@ export function partLine(
           : `So far: nothing against it; ${answers}`,
       detail: someOf(left.map((one) => one.name)),
       complete: false,
+      verdict: null,
     }
   }
-  if (!result) return { text: stale ? 'Complete, being judged' : 'Complete, not judged', detail: '', complete: true }
-  return stale
-    ? { text: 'Complete, being judged', detail: '', complete: true }
-    : { text: verdictWord(result.verdict), detail: result.sentence, complete: true }
+  if (!result || stale)
+    return {
+      text: stale ? 'Complete, being judged' : 'Complete, not judged',
+      detail: '',
+      complete: true,
+      verdict: null,
+    }
+  return { text: verdictWord(result.verdict), detail: result.sentence, complete: true, verdict: result.verdict }
 }
 
 /** Help that is wanted only because an answer is still missing is nothing against the part yet. */

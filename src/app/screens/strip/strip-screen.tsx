@@ -7,6 +7,7 @@ import { PageHead, usePageHead } from '../../components/page-head.tsx'
 import { StripMap } from '../../components/strip/strip-map.tsx'
 import { stripParts } from '../../components/strip/strip-words.ts'
 import { TapeRule } from '../../components/tape-rule.tsx'
+import { VerdictMark } from '../../components/verdict-mark.tsx'
 import { verdictWord } from '../../components/verdict-word.ts'
 import type { Session } from '../../state/session.ts'
 import { choices } from '../../state/settings.ts'
@@ -117,7 +118,8 @@ function Recording({ session, walk }: { session: Session; walk: Walk }) {
               </a>
             )}
             <p class="so-far">
-              <b>{line.text}</b> <span class={line.complete ? '' : 'soft'}>{line.detail}</span>
+              {line.verdict ? <VerdictMark verdict={line.verdict} line /> : <b>{line.text}</b>}{' '}
+              <span class={line.complete ? '' : 'soft'}>{line.detail}</span>
             </p>
           </header>
           {half && session.draft.value && (
