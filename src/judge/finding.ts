@@ -96,11 +96,12 @@ export function toCheck({ subject, detail, told, differs, begun, pauses, ...chec
 
 /** Demand over capacity at both ends; an end without capacity is null. Infinite capacity leaves 0. */
 export function ratioOf(demand: { low: number; high: number }, capacity: { low: number; high: number }): Ratio {
-  const end = (need: number, there: number) =>
-    there <= 0 ? null : there === Number.POSITIVE_INFINITY ? 0 : need / there
-  const low = end(demand.low, capacity.high)
-  const high = demand.high === Number.POSITIVE_INFINITY ? null : end(demand.high, capacity.low)
-  return [low === null ? null : Math.max(0, low), high]
+  return [endOf(demand.low, capacity.high), endOf(demand.high, capacity.low)]
+}
+
+function endOf(needed: number, there: number): number | null {
+  if (there <= 0 || needed === Number.POSITIVE_INFINITY) return null
+  return there === Number.POSITIVE_INFINITY ? 0 : Math.max(0, needed / there)
 }
 
 /** The state of a ratio: null ends count as above 1. */
