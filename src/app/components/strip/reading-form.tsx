@@ -54,7 +54,8 @@ export function ReadingForm(props: ReadingFormProps) {
   const [note, setNote] = useState('')
   const [trouble, setTrouble] = useState<Trouble | null>(null)
   const [saving, setSaving] = useState(false)
-  const field = useRef<HTMLInputElement>(null)
+  const alert = useRef<HTMLDivElement>(null)
+  useEffect(() => alert.current?.scrollIntoView({ block: 'nearest' }), [trouble])
 
   const { keep } = props
   useEffect(() => {
@@ -116,103 +117,104 @@ export function ReadingForm(props: ReadingFormProps) {
         void save(text)
       }}
     >
-      <div class="reading-value">
-        <label for="reading-value">
-          <span class="hidden">{props.title}: </span>Value
-        </label>
-        <input
-          id="reading-value"
-          class="value"
-          data-first
-          ref={field}
-          inputMode="none"
-          autocomplete="off"
-          autocapitalize="off"
-          spellcheck={false}
-          value={text}
-          aria-describedby="reading-read"
-          aria-invalid={trouble !== null}
-          onInput={(event) => change(event.currentTarget.value)}
-        />
-        <output class="reading-unit">{unit}</output>
-      </div>
-      <p id="reading-read" class="soft">
-        {read?.ok
-          ? `Reads as ${boundWords[read.bound]}${withUnit(text.replace(/^\s*[<>≤≥]\s*/, ''), unit)}`
-          : 'For example 1.24, >2.1 or <20'}
-      </p>
-      {trouble && (
-        <div role="alert" class="trouble">
-          <p>{trouble.text}</p>
-          <div class="chips-row">
-            {trouble.choices.map((choice) => (
-              <button
-                key={choice.text}
-                type="button"
-                class="key"
-                onClick={() => {
-                  change(choice.text)
-                  void save(choice.text)
-                }}
-              >
-                {choice.label}
-              </button>
-            ))}
-          </div>
+      <div class="reading-scroll">
+        <div class="reading-value">
+          <label for="reading-value">
+            <span class="hidden">{props.title}: </span>Value
+          </label>
+          <input
+            id="reading-value"
+            class="value"
+            data-first
+            inputMode="none"
+            autocomplete="off"
+            autocapitalize="off"
+            spellcheck={false}
+            value={text}
+            aria-describedby="reading-read"
+            aria-invalid={trouble !== null}
+            onInput={(event) => change(event.currentTarget.value)}
+          />
+          <output class="reading-unit">{unit}</output>
         </div>
-      )}
-      <Keypad type={(mark) => change(text + mark)} rubOut={() => change(text.slice(0, -1))} />
-      {unitsOffered(props.field, props.units).length > 1 && (
-        <Chips
-          legend="Unit"
-          choices={unitsOffered(props.field, props.units).map((one) => ({ value: one, label: one }))}
-          chosen={unit}
-          choose={setUnit}
-        />
-      )}
-      {props.asksPlace && (
-        <Chips
-          legend="Where along the stretch"
-          choices={[
-            { value: 'same', label: 'Same place again' },
-            { value: 'another', label: 'Another place' },
-          ]}
-          chosen={place}
-          choose={setPlace}
-        />
-      )}
-      {props.instruments.length > 0 && (
-        <ToolChips offered={props.instruments} chosen={instrument} choose={setInstrument} />
-      )}
+        <p id="reading-read" class="soft">
+          {read?.ok
+            ? `Reads as ${boundWords[read.bound]}${withUnit(text.replace(/^\s*[<>≤≥]\s*/, ''), unit)}`
+            : 'For example 1.24, >2.1 or <20'}
+        </p>
+        {trouble && (
+          <div role="alert" class="trouble" ref={alert}>
+            <p>{trouble.text}</p>
+            <div class="chips-row">
+              {trouble.choices.map((choice) => (
+                <button
+                  key={choice.text}
+                  type="button"
+                  class="key"
+                  onClick={() => {
+                    change(choice.text)
+                    void save(choice.text)
+                  }}
+                >
+                  {choice.label}
+                </button>
+              ))}
+            </div>
+          </div>
+        )}
+        <Keypad type={(mark) => change(text + mark)} rubOut={() => change(text.slice(0, -1))} />
+        {unitsOffered(props.field, props.units).length > 1 && (
+          <Chips
+            legend="Unit"
+            choices={unitsOffered(props.field, props.units).map((one) => ({ value: one, label: one }))}
+            chosen={unit}
+            choose={setUnit}
+          />
+        )}
+        {props.asksPlace && (
+          <Chips
+            legend="Where along the stretch"
+            choices={[
+              { value: 'same', label: 'Same place again' },
+              { value: 'another', label: 'Another place' },
+            ]}
+            chosen={place}
+            choose={setPlace}
+          />
+        )}
+        {props.instruments.length > 0 && (
+          <ToolChips offered={props.instruments} chosen={instrument} choose={setInstrument} />
+        )}
+        {props.instruments.length > 0 && (
+          <details class="reading-more">
+            <summary>Found, spot, note</summary>
+            {props.asksFound && (
+              <Chips
+                legend="As found"
+                choices={[
+                  { value: 'empty', label: 'Empty' },
+                  { value: 'in-use', label: 'In use' },
+                ]}
+                chosen={found}
+                choose={setFound}
+              />
+            )}
+            <label class="plain-field">
+              At what, in a word or two
+              <input value={at} maxLength={200} onInput={(event) => setAt(event.currentTarget.value)} />
+            </label>
+            <label class="plain-field">
+              Note
+              <input value={note} maxLength={2000} onInput={(event) => setNote(event.currentTarget.value)} />
+            </label>
+          </details>
+        )}
+      </div>
       <div class="save-row">
         <button type="submit" class="key primary" disabled={saving}>
           {saving ? 'Saving' : 'Save'}
         </button>
       </div>
-      {props.instruments.length > 0 && (
-        <details class="reading-more">
-          <summary>Found, spot, note</summary>
-          {props.asksFound && (
-            <Chips
-              legend="As found"
-              choices={[
-                { value: 'empty', label: 'Empty' },
-                { value: 'in-use', label: 'In use' },
-              ]}
-              chosen={found}
-              choose={setFound}
-            />
-          )}
-          <label class="plain-field">
-            At what, in a word or two
-            <input value={at} maxLength={200} onInput={(event) => setAt(event.currentTarget.value)} />
-          </label>
-          <label class="plain-field">
-            Note
-            <input value={note} maxLength={2000} onInput={(event) => setNote(event.currentTarget.value)} />
-          </label>
-        </details>
-      )}
     </form>
   )
 }
