@@ -1,12 +1,11 @@
 // Takes pictures of every screen into pictures/, and tells what an accessibility checker finds on each.
 // Needs a build in dist/. `node scripts/pictures.mjs [screen ...]` takes those screens alone.
 import { spawn } from 'node:child_process'
-import { mkdirSync, readFileSync } from 'node:fs'
-import { createRequire } from 'node:module'
+import { mkdirSync } from 'node:fs'
 import { chromium } from '@playwright/test'
+import axe from 'axe-core'
 import { chromiumArguments, ensureChromium } from './chromium.mjs'
 
-const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8')
 const survey = '/venue/demo-museum'
 
 /** What each picture shows: an address, and what is done there before it is taken. */
@@ -98,7 +97,7 @@ async function openAll(page, title) {
 
 /** The page's policy lets no script in from outside; the browser's own debugger may. */
 async function check(page, screen, look) {
-  await page.evaluate(axe)
+  await page.evaluate(axe.source)
   const { violations } = await page.evaluate(() => globalThis.axe.run(document, { iframes: false }))
   for (const { id, help, nodes } of violations)
     fault(

@@ -26,6 +26,8 @@ interface Question {
   on: string
   tell(progress: JudgeProgress): void
   settle(answer: Answer | null): void
+  /** Its asker wants it no more. */
+  dropped: boolean
 }
 
 let worker: Worker | null = null
@@ -47,9 +49,9 @@ export function judge(survey: Survey, on: string, tell: (progress: JudgeProgress
   const answer = new Promise<Answer | null>((resolve) => {
     settle = resolve
   })
-  const question: Question = { survey, on, tell, settle }
+  const question: Question = { survey, on, tell, settle, dropped: false }
   if (current) {
-    waiting.push(current.question)
+    if (!current.question.dropped) waiting.push(current.question)
     stop(current.number)
   }
   waiting.push(question)
@@ -58,9 +60,10 @@ export function judge(survey: Survey, on: string, tell: (progress: JudgeProgress
 }
 
 function cancel(question: Question) {
+  question.dropped = true
   const place = waiting.indexOf(question)
   if (place >= 0) waiting.splice(place, 1)
-  else if (current?.question === question) stop(current.number)
+  if (current?.question === question) stop(current.number)
   question.settle(null)
 }
 

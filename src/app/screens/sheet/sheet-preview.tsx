@@ -1,24 +1,37 @@
-import { useMemo, useRef } from 'preact/hooks'
+import { useEffect, useMemo, useRef, useState } from 'preact/hooks'
 import { lint } from '../../../sheets/content/lint.ts'
 import type { Outline } from '../../../sheets/content/tree.ts'
-import { toHtml } from '../../../sheets/html/to-html.ts'
-import { toText } from '../../../sheets/text/to-text.ts'
 import { BigKey } from '../../components/big-key.tsx'
 import { fileName, saveFile, shareFile, sharesFiles } from '../../state/hand-over.ts'
-
-export type SheetForm = 'html' | 'text'
+import type { SheetForm, Source } from './forms.ts'
 
 /** What the sheet says, exactly as it is handed over; its keys; what its words still lack. */
-export function SheetPreview(props: { outline: Outline; form: SheetForm; file: string; say(text: string): void }) {
-  const { outline, form } = props
+export function SheetPreview(props: {
+  outline: Outline
+  source: Source
+  form: SheetForm
+  name: string
+  say(text: string): void
+}) {
+  const { outline, source, form, say } = props
   const frame = useRef<HTMLIFrameElement>(null)
-  const text = useMemo(() => (form === 'html' ? toHtml(outline) : toText(outline)), [outline, form])
-  const file = {
-    name: fileName(props.file, form === 'html' ? 'html' : 'txt'),
-    type: form === 'html' ? 'text/html' : 'text/plain',
-    text,
-  }
+  const [written, setWritten] = useState<{ form: string; text: string } | null>(null)
   const findings = useMemo(() => lint(outline), [outline])
+
+  useEffect(() => {
+    let wanted = true
+    form.write(outline, source).then(
+      (text) => wanted && setWritten({ form: form.id, text }),
+      (error: unknown) => wanted && say(`This form could not be written: ${String(error)}`),
+    )
+    return () => {
+      wanted = false
+    }
+  }, [outline, form, source.survey, source.assessment, source.walk])
+
+  if (written?.form !== form.id) return <p role="status">Writing</p>
+  const { text } = written
+  const file = { name: fileName(props.name, form.ending), type: form.type, text }
   return (
     <div class="stack">
       <div class="keys">
@@ -26,17 +39,15 @@ export function SheetPreview(props: { outline: Outline; form: SheetForm; file: s
           primary
           press={() => {
             saveFile(file)
-            props.say(`Given to the browser to save: ${file.name}`)
+            say(`Given to the browser to save: ${file.name}`)
           }}
         >
           Save
         </BigKey>
         {sharesFiles() && (
-          <BigKey press={async () => props.say((await shareFile(file)) ? 'Handed over.' : 'Not handed over.')}>
-            Share
-          </BigKey>
+          <BigKey press={async () => say((await shareFile(file)) ? 'Handed over.' : 'Not handed over.')}>Share</BigKey>
         )}
-        {form === 'html' && <BigKey press={() => frame.current?.contentWindow?.print()}>Print</BigKey>}
+        {form.id === 'html' && <BigKey press={() => frame.current?.contentWindow?.print()}>Print</BigKey>}
       </div>
       {findings.length > 0 && (
         <details>
@@ -50,7 +61,7 @@ export function SheetPreview(props: { outline: Outline; form: SheetForm; file: s
           </ul>
         </details>
       )}
-      {form === 'html' ? (
+      {form.id === 'html' ? (
         // No script runs in it; the same origin only lets it be printed.
         <iframe
           ref={frame}

@@ -1,5 +1,5 @@
 import './sheet.css'
-import { useState } from 'preact/hooks'
+import { useMemo, useState } from 'preact/hooks'
 import { outline } from '../../../sheets/content/outline.ts'
 import type { Outline, Reader, Refusal } from '../../../sheets/content/tree.ts'
 import { PageHead } from '../../components/page-head.tsx'
@@ -7,7 +7,8 @@ import { StatusLine } from '../../components/status-line.tsx'
 import { Chips } from '../../components/strip/chips.tsx'
 import type { Session } from '../../state/session.ts'
 import { today } from '../../state/today.ts'
-import { type SheetForm, SheetPreview } from './sheet-preview.tsx'
+import { sheetForms } from './forms.ts'
+import { SheetPreview } from './sheet-preview.tsx'
 
 const readers: readonly { value: Reader; label: string }[] = [
   { value: 'client', label: 'Client' },
@@ -19,15 +20,20 @@ const readers: readonly { value: Reader; label: string }[] = [
 /** The sheets of one walk: who reads it, in which form, what it says, and out of the app with it. */
 export function SheetScreen({ session, walk: id }: { session: Session; walk: string }) {
   const [reader, setReader] = useState<Reader>('client')
-  const [form, setForm] = useState<SheetForm>('html')
+  const [form, setForm] = useState('html')
   const [said, setSaid] = useState('')
   const survey = session.survey.value
   const judgement = session.judgement.value
   const name = survey.view.walks.find((one) => one.id === id)?.name ?? 'Walk'
   const result = judgement.walks.find((one) => one.id === id)
   const assessment = judgement.assessment
-  const written: Outline | Refusal | null =
-    judgement.stale || !assessment || !result ? null : outline(survey, result, assessment, reader, { on: today() })
+  const written = useMemo(
+    (): Outline | Refusal | null =>
+      judgement.stale || !assessment || !result ? null : outline(survey, result, assessment, reader, { on: today() }),
+    [judgement.stale, survey, assessment, result, reader],
+  )
+  const offered = sheetForms.filter(({ readers: only }) => !only || only.includes(reader))
+  const chosen = offered.find((one) => one.id === form) ?? offered[0]
 
   return (
     <main class="page wide">
@@ -38,12 +44,9 @@ export function SheetScreen({ session, walk: id }: { session: Session; walk: str
           <Chips legend="For" choices={readers} chosen={reader} choose={(one) => setReader(one as Reader)} />
           <Chips
             legend="As"
-            choices={[
-              { value: 'html', label: 'Page' },
-              { value: 'text', label: 'Plain text' },
-            ]}
-            chosen={form}
-            choose={(one) => setForm(one as SheetForm)}
+            choices={offered.map(({ id: value, label }) => ({ value, label }))}
+            chosen={chosen?.id ?? null}
+            choose={setForm}
           />
           <p class="soft">
             A sheet names the client’s measurements or your readings. Hand it only to the person it is for.
@@ -58,7 +61,16 @@ export function SheetScreen({ session, walk: id }: { session: Session; walk: str
         ) : written.kind === 'refusal' ? (
           <NoSheet refusal={written} address={`/venue/${survey.survey}`} />
         ) : (
-          <SheetPreview outline={written} form={form} file={`${name} ${reader}`} say={setSaid} />
+          chosen &&
+          assessment && (
+            <SheetPreview
+              outline={written}
+              source={{ survey, assessment, walk: id }}
+              form={chosen}
+              name={`${name} ${reader}`}
+              say={setSaid}
+            />
+          )
         )}
       </div>
     </main>

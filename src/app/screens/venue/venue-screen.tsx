@@ -51,6 +51,11 @@ export function VenueScreen({ session }: { session: Session }) {
         </p>
       )}
       <JudgingLine judgement={judgement} />
+      {session.person.value === '' && (
+        <p class="trouble">
+          This phone does not know your name: what you enter stands without it. <a href="/settings">Give your name</a>
+        </p>
+      )}
       {!view.team && (
         <p class="trouble">
           No team card yet: what is judged holds for the default figures.{' '}
