@@ -237,6 +237,59 @@ describe("the client's sheet", () => {
   })
 })
 
+describe('cautions of one thing', () => {
+  const door = feature('oak-door', 'hinged-door', { help: porter })
+  const walk = libraryWalk()
+  const bay = walk.segments[1] as (typeof walk.segments)[number]
+  bay.features = [door]
+  const told = (more: object) => {
+    const result = libraryResult({
+      segments: libraryResult().segments.map((one) =>
+        one.id === 'bay' ? judgedPart('bay', { verdict: 'with-help', ...more }) : one,
+      ),
+    })
+    const parts = partsOf(client(result, walk)).filter((part) => part.heading.includes('bay'))
+    return parts.map((part) => itemsOf(part).filter((item) => item.startsWith('Caution')))
+  }
+  const row = { feature: 'oak-door', harm: 'trap', text: "Door, at 12 o'clock, push. Stop and find the handle first." }
+  const heavy = { feature: 'oak-door', harm: 'trap', text: 'Heavy door.' }
+  const tight = { feature: 'oak-door', harm: 'comfort', text: 'Tight here. Arms in.' }
+  const lip = { feature: 'oak-door', harm: 'fall', text: 'Small lip. Slow.' }
+  const force = (state: string) => ({ ...libraryResult().checks[0], id: 'door-force', feature: 'oak-door', state })
+
+  it('are one, of its worst harm', () => {
+    expect(told({ cautions: [row, heavy, tight] })).toEqual([
+      ["Caution: Door, at 12 o'clock, push. Stop and find the handle first. Heavy door. Tight. Arms in."],
+    ])
+  })
+
+  it('are two where it can both trip and trap', () => {
+    expect(told({ cautions: [lip, row] })).toEqual([
+      ["Caution: Door, at 12 o'clock, push. Stop and find the handle first."],
+      ['Caution: Small lip. Slow.'],
+    ])
+  })
+
+  it('wait for whoever helps, who finds the handle', () => {
+    expect(told({ cautions: [row, heavy], checks: [force('helped')] })).toEqual([
+      ["Caution: Stop. Wait for the porter. Door, at 12 o'clock, push. Heavy door."],
+    ])
+    expect(told({ cautions: [], checks: [force('helped')] })).toEqual([['Caution: Stop. Wait for the porter.']])
+    expect(
+      told({ cautions: [{ ...row, text: 'Lift. Stop, and wait for porter.' }], checks: [force('helped')] }),
+    ).toEqual([['Caution: Lift. Stop, and wait for the porter.']])
+  })
+
+  it('say two things of the part itself apart', () => {
+    const crowd = { feature: 'bay', harm: 'fall', text: 'People may cross the leash. Slow.' }
+    const loud = { feature: 'bay', harm: 'fall', text: 'Loud here. Feel the leash; expect no speech.' }
+    expect(told({ cautions: [crowd, loud] })).toEqual([
+      ['Caution: Loud. Feel the leash. Expect no speech.'],
+      ['Caution: People may cross the leash. Slow.'],
+    ])
+  })
+})
+
 describe('the linter', () => {
   it.each([
     ['Turn at the shelf over there.', 'vague: "over there"'],

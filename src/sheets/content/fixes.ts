@@ -6,6 +6,7 @@ import { formatForce, formatGradient, formatMm, formatTime } from '../../units/f
 import { featureName, featuresOf } from './help.ts'
 import { own } from './own.ts'
 import type { Scope } from './scope.ts'
+import { distinct } from './words.ts'
 
 /** What a venue can change, and by how much a check's verdict would turn. */
 export interface Fix {
@@ -33,7 +34,7 @@ const levers: Readonly<Record<string, Grows | Falls>> = {
   'door-time': { grows: 's', of: 'time the door stays open' },
   'lift-time': { grows: 's', of: 'time the lift stays open' },
   traction: { grows: 'N', of: 'grip' },
-  slip: { grows: 'points', of: 'pendulum value' },
+  slip: { grows: 'points', of: 'on the pendulum' },
   'door-force': { falls: 'N', of: 'force' },
   level: { falls: 'mm', of: 'height' },
   gap: { falls: 'mm', of: 'gap' },
@@ -63,16 +64,41 @@ const teams: readonly string[] = ['stop', 'stop-at-edge', 'slack-leash', 'batter
 
 /** Fixes asked of the venue: worst first, then by harm, then the least room left. */
 export function fixesOf(scope: Scope): Fix[] {
+  return together(hazardsOf(scope)).sort(worstFirst)
+}
+
+/** The same, one for each check. */
+export function hazardsOf(scope: Scope): Fix[] {
   const fixes = [
     ...scope.stretches.flatMap(({ segment, result }) => result.checks.map((check) => fixOf(check, segment))),
     ...scope.result.checks.map((check) => fixOf(check, null)),
   ].filter((fix) => fix !== null)
-  return fixes.sort(
-    (one, other) =>
-      one.priority - other.priority ||
-      harms.indexOf(one.check.harm) - harms.indexOf(other.check.harm) ||
-      highOf(other.check) - highOf(one.check),
+  return fixes.sort(worstFirst)
+}
+
+function worstFirst(one: Fix, other: Fix): number {
+  return (
+    one.priority - other.priority ||
+    harms.indexOf(one.check.harm) - harms.indexOf(other.check.harm) ||
+    highOf(other.check) - highOf(one.check)
   )
+}
+
+/** What is asked at one place in the same words is asked once, for its worst check, with all its clauses and figures. */
+function together(fixes: readonly Fix[]): Fix[] {
+  const asked = new Map<string, Fix[]>()
+  for (const fix of fixes) {
+    const key = JSON.stringify([fix.place, fix.what])
+    asked.set(key, [...(asked.get(key) ?? []), fix])
+  }
+  return [...asked.values()].map((same) => {
+    const worst = same.reduce((one, other) => (other.priority < one.priority ? other : one))
+    return {
+      ...worst,
+      clause: distinct(same.flatMap(({ clause }) => clause.split('; '))).join('; '),
+      turns: distinct(same.map(({ turns }) => turns).filter((turns) => turns !== '')).join('; '),
+    }
+  })
 }
 
 function fixOf(check: Check, segment: Segment | null): Fix | null {

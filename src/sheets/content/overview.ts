@@ -1,9 +1,10 @@
 import { markWords, metresWords } from './directions.ts'
-import { featureName, helpsOf, whoWhere } from './help.ts'
+import { featureName, helpsOf, meetings, roleOf, the } from './help.ts'
 import type { Lead } from './lead.ts'
 import { own } from './own.ts'
 import type { Scope } from './scope.ts'
-import { severe, stretchesOf } from './stretches.ts'
+import { stretchesOf } from './stretches.ts'
+import { severe } from './told-cautions.ts'
 import { type Line, line, list, type Section, section } from './tree.ts'
 import { capital, count, distinct, joined, sentences, stopped } from './words.ts'
 
@@ -21,10 +22,10 @@ export function overview(scope: Scope, parts: readonly Section[]): Section {
     )
   const dead = scope.walk.words.deadEnd?.says
   if (dead) lines.push(line(`At the dead end: ${sentences(own(dead, 400)).join(' ')}`, 'dead end of the walk'))
-  for (const helper of whoWhere(helpsOf(scope).filter((help) => help.needed))
-    .split(', and ')
-    .filter(Boolean))
-    lines.push(line(`With you: ${helper}.`))
+  for (const { help, place } of meetings(helpsOf(scope).filter(({ needed }) => needed))) {
+    const role = roleOf(help)
+    if (role) lines.push(line(`With you at ${place}: ${the(role)}.`, `help at ${place}`))
+  }
   return section('Overview', [list(lines)])
 }
 

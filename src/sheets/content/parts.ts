@@ -1,9 +1,9 @@
-import type { Caution } from '../../judge/result.ts'
 import { effortWords, markWords, metresWords, turnAngle, turnWords } from './directions.ts'
 import { the } from './help.ts'
 import { own } from './own.ts'
 import type { Scope } from './scope.ts'
-import { cautionsOf, type Stretch, severe, stopLine, stretchesOf, type ToldCaution } from './stretches.ts'
+import { type Stretch, stretchesOf } from './stretches.ts'
+import { cautionsOf, severe, stopLine, type ToldCaution } from './told-cautions.ts'
 import { gap, type Line, line, list, type Section } from './tree.ts'
 import { capital, sentences, stopped } from './words.ts'
 
@@ -80,7 +80,7 @@ function robotParts(scope: Scope, stretch: Stretch, name: string, start: Line[])
   const segment = stretch.segments[0]
   const result = stretch.results[0]
   if (!segment || !result) return []
-  const cautions = cautionsOf(segment, result, (caution) => spoken(caution))
+  const cautions = cautionsOf(segment, result)
   const landmark = segment.words.landmark?.says
   const notes = [
     shoreline(segment.words.shoreline?.says, own(segment.name)),
@@ -118,11 +118,6 @@ function grouped(cautions: readonly ToldCaution[], notes: number): ToldCaution[]
 
 function cautionLine(caution: ToldCaution): Line {
   return line(caution.stop ? caution.text : `Caution: ${caution.text}`, caution.from)
-}
-
-/** The judge's words on a caution, one line. "Here" says nothing: the part says where. */
-function spoken(caution: Caution): string {
-  return sentences(own(caution.text, 400).replace(/ here\b/g, '')).join(' ')
 }
 
 function walkLine(scope: Scope, stretch: Stretch, pace: number | null): Line {

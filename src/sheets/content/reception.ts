@@ -61,9 +61,11 @@ function whoIsWhere(helps: readonly PlaceHelp[]): Section {
 }
 
 function whatTheySay({ walk }: Scope, helps: readonly PlaceHelp[]): Section {
-  const lines = helps.flatMap(({ help, place }) => {
+  const lines = helps.flatMap(({ help, place, segment, holder }) => {
     const role = roleOf(help)
-    return role ? [`${capital(the(role))} at ${place}: "Hello, I am [name], ${role}. Would you like my arm?"`] : []
+    const offer =
+      segment.ledBy !== 'robot' || holder === walk.id ? 'Would you like my arm?' : 'I stay until you are through.'
+    return role ? [`${capital(the(role))} at ${place}: "Hello, I am [name], ${role}. ${offer}"`] : []
   })
   const rest = walk.words.rest?.says
   if (rest && rest !== 'none') lines.push(`When asked for a seat: "${capital(stopped(own(rest, 200)))}"`)
@@ -75,7 +77,7 @@ function alarm({ walk }: Scope): Section {
   const lines = ['The handler lets the leash go, puts a hand on the wall, stands and calls out.']
   lines.push(role ? `${capital(the(role))} goes to the handler.` : 'Who goes to the handler: not named yet.')
   if (walk.alarm?.act) lines.push(...sentences(ownWhole(walk.alarm.act)))
-  if (walk.alarm?.ifNobody) lines.push(`If nobody comes: ${ownWhole(walk.alarm.ifNobody)}.`)
+  if (walk.alarm?.ifNobody) lines.push(`The handler, if nobody comes: ${ownWhole(walk.alarm.ifNobody)}.`)
   return section('If the alarm sounds', [list(lines.map(stopped))])
 }
 

@@ -1,5 +1,5 @@
 import { basis, standingCautions } from './basis.ts'
-import { fixesOf } from './fixes.ts'
+import { fixesOf, hazardsOf } from './fixes.ts'
 import { helpsOf, meetings, roleOf, verdictLine } from './help.ts'
 import { own, ownWhole } from './own.ts'
 import type { Scope } from './scope.ts'
@@ -98,7 +98,7 @@ function goodPoints({ stretches }: Scope): string[] {
 }
 
 function hazards(scope: Scope): string[] {
-  const lines = fixesOf(scope).map(({ check }) => stopped(ownWhole(check.sentence)))
+  const lines = hazardsOf(scope).map(({ check }) => stopped(ownWhole(check.sentence)))
   for (const { segment, result } of scope.stretches)
     for (const caution of result.cautions)
       if (!result.checks.some((check) => check.feature === caution.feature && check.state !== 'passes'))

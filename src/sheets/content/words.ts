@@ -53,7 +53,7 @@ export function stopped(text: string): string {
   return /[.!?…]\u2069?$/.test(text) ? text : `${text}.`
 }
 
-/** More words than this in one breath are cut at their middle "and". */
+/** More words than this in one breath are cut at an "and" before a verb ("offers an arm and leads"). */
 const longBreath = 12
 
 /** Words with semicolons become sentences: "offers an arm; a second person carries it" are two. */
@@ -69,7 +69,7 @@ function cutAtAnd(piece: string): string[] {
   const words = piece.split(' ')
   if (words.length <= longBreath) return [piece]
   const middle = words.length / 2
-  const ands = words.flatMap((word, i) => (word === 'and' && i > 2 && i < words.length - 2 ? [i] : []))
+  const ands = words.flatMap((word, i) => (word === 'and' && /^[a-z]+s$/.test(words[i + 1] ?? '') ? [i] : []))
   const at = ands.sort((one, other) => Math.abs(one - middle) - Math.abs(other - middle))[0]
   return at === undefined ? [piece] : [words.slice(0, at).join(' ').replace(/,$/, ''), words.slice(at + 1).join(' ')]
 }
