@@ -67,6 +67,11 @@ export function StripMap(props: { parts: readonly StripPart[]; current: number; 
           <Words scene={scene} text={size.text} />
           <You scene={scene} />
           <AcrossScale scene={scene} height={size.height} />
+          {scene.unsaid > 0 && (
+            <text class="strip-unsaid" x="8" y={size.height - 7}>
+              {scene.unsaid} more in the list
+            </text>
+          )}
         </svg>
       )}
     </div>
@@ -143,7 +148,6 @@ function Words({ scene, text }: { scene: StripScene; text: number }) {
           </g>
         )
       })}
-      {scene.unsaid > 0 && <text class="strip-unsaid" x={scene.scale.words.left} y={18} text-anchor="start" />}
     </>
   )
 }
