@@ -1,4 +1,5 @@
 import { assess } from './assess.ts'
+import { clearance } from './clearance-command.ts'
 import { complaint, done, type Ended, type Machine } from './ended.ts'
 import { helpText } from './help-text.ts'
 import { schema } from './schema.ts'
@@ -9,6 +10,7 @@ declare const __VERSION__: string
 
 const commands: Readonly<Record<string, (args: readonly string[], machine: Machine) => Ended | Promise<Ended>>> = {
   assess,
+  clearance,
   sheet,
   schema,
 }
