@@ -185,6 +185,22 @@ describe("the client's sheet", () => {
     expect(turned(45, 'left').some((text) => text.includes('begins with a turn'))).toBe(false)
   })
 
+  it('says where the leash is changed, and only on the part that begins there', () => {
+    const parts = partsOf(client(libraryResult({ changes: [{ segment: 'aisle', leash: 0.8 }] })))
+    const said = parts.map(({ blocks }) => JSON.stringify(blocks).includes('Change the leash to the 0.8 metre mark.'))
+    expect(said).toEqual([false, false, false, false, true])
+  })
+
+  it('says where to turn back when the battery is only just enough', () => {
+    // 117 s counted on, less the reserve of 1.3, there and back: 45 s a way. At 0.5 m/s the hall takes 24.4 s, the bay
+    // 8 s and the steps 6 s: 38.4 s; the aisle's 18 s go past it.
+    const battery = { ...libraryResult().checks[0], state: 'tight', caution: 'Just enough.', capacity: 117 } as never
+    expect(textsOf(client(libraryResult({ checks: [battery] })))).toContain(
+      'Battery: just enough. Turn back before "Down the aisle" if it runs low.',
+    )
+    expect(textsOf(client()).some((text) => text.startsWith('Battery:'))).toBe(false)
+  })
+
   it('has a short version of four sentences', () => {
     const short = client().sections.find(({ heading }) => heading === 'Short version')
     expect(

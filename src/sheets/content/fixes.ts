@@ -110,12 +110,19 @@ function fixOf(check: Check, segment: Segment | null): Fix | null {
   if (check.id === 'edge' && feature && isGuarded(feature)) return null
   return {
     priority,
-    place: feature ? featureName(feature) : own(segment?.name ?? 'whole walk'),
+    place: placeOf(feature, segment),
     what: whatToDo(check, feature),
     clause: own(check.source),
     turns: turnsWith(check),
     check,
   }
+}
+
+/** A thing without a name of its own is told by its part: "turn, Down the narrow passage". */
+function placeOf(feature: Feature | undefined, segment: Segment | null): string {
+  const part = own(segment?.name ?? 'whole walk')
+  if (!feature) return part
+  return feature.name ? featureName(feature) : `${featureName(feature)}, ${part}`
 }
 
 function priorityOf(check: Check): Fix['priority'] | null {

@@ -23,7 +23,13 @@ export function outline(
 ): Outline | Refusal {
   const scope = scopeOf(survey, walk, assessment, options, team)
   const written = write[reader](scope, validUntil(scope))
-  return written.kind === 'outline' && options.draft ? markDraft(written) : written
+  const draft = options.draft || (reader !== 'client' && isUnfinished(walk))
+  return written.kind === 'outline' && draft ? markDraft(written) : written
+}
+
+/** Something was never answered. A client is given no part of such a walk; anybody else's sheet says that it is a draft. */
+function isUnfinished(walk: WalkResult): boolean {
+  return walk.missing.length > 0 || walk.segments.length === 0 || walk.segments.some((one) => one.missing.length > 0)
 }
 
 const write: Record<Reader, (scope: Scope, goodUntil: string | null) => Outline | Refusal> = {

@@ -52,7 +52,7 @@ function turnBackLines(scope: Scope): Line[] {
   let seconds = 0
   for (const { segment } of scope.stretches) {
     seconds += (lengthOf(segment) ?? longest) / (scope.result.pace ?? scope.team.handler.pace)
-    if (seconds > there) return [line(`Battery: just enough. Turn back by "${own(segment.name)}" if it runs low.`)]
+    if (seconds > there) return [line(`Battery: just enough. Turn back before "${own(segment.name)}" if it runs low.`)]
   }
   return [line('Battery: just enough for this walk, not for the way back.')]
 }

@@ -14,7 +14,7 @@ body.wide{max-width:72rem}
 h1,h2,h3,h4{line-height:1.25;margin:2rem 0 .5rem}
 h1{font-size:1.45rem;margin-top:1rem}h2{font-size:1.22rem}h3{font-size:1.1rem}h4{font-size:1rem}
 p,ul{margin:.5rem 0}ul{padding-left:1.25rem}li{margin:.35rem 0}
-.verdict{display:flex;gap:12px;align-items:center;font-weight:600;font-size:1.22rem}
+.verdict{display:flex;gap:12px;align-items:flex-start;font-weight:600;font-size:1.22rem}
 .mark{flex:none}.tape{display:block;margin:0 0 8px}.tape-ground{fill:#F2C230}.tape-ticks{stroke:#1B1F3B;fill:none}
 .verdict-usable .mark{color:var(--usable)}.verdict-with-cautions .mark{color:var(--with-cautions)}.verdict-with-help .mark{color:var(--with-help)}.verdict-do-not-use .mark{color:var(--do-not-use)}.verdict-not-known .mark{color:var(--not-known)}
 .look{border:1px solid var(--rule);border-radius:10px;margin:1rem 0;padding:8px 16px}
