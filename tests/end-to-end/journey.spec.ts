@@ -127,10 +127,12 @@ test('one walk by touch alone: the network cut, the phone killed, nothing lost, 
       await page.goBack()
     })
 
-    await test.step('the sheet: not for a client before staff tried it; for the venue, saved as a file', async () => {
+    await test.step('the sheet: one sentence for the client of a walk not known; for the venue, saved as a file', async () => {
       await surveyor.tap(page.getByRole('link', { name: /^Sheet/ }))
-      await expect(page.getByText('No sheet yet')).toBeVisible()
-      await look(page, 'sheet, refused for the client')
+      const preview = page.frameLocator('iframe').locator('body')
+      await expect(preview).toContainText('Do not use this walk.')
+      await expect(preview).not.toContainText('Part 1')
+      await look(page, 'sheet, for the client of a walk not known')
       await surveyor.tap(page.getByRole('radio', { name: 'Venue manager' }))
       await surveyor.tap(page.getByRole('radio', { name: 'Plain text' }))
       await look(page, 'sheet for the venue manager')
