@@ -71,7 +71,7 @@ export const rooms = {
 
 /** Package (or its scope) -> the rooms that own it, with the rooms within them. */
 export const owners = {
-  valibot: ['record'],
+  valibot: ['record', 'standards'],
   '@valibot/to-json-schema': ['record'],
   idb: ['store'],
   preact: ['app'],

@@ -22,6 +22,8 @@ export interface Check {
   demand: number | null
   capacity: number | null
   ratio: [low: number | null, high: number | null] | null
+  /** The ratio of the way back, where the check has a direction: shown, and judged only on a walk of its own. */
+  back?: [low: number | null, high: number | null]
   /** Leash and pace it was judged at, where it depends on them. */
   at: { leash: number; pace: number } | null
   /** Clause, or "common practice". */

@@ -59,11 +59,10 @@ export function roomSolver(planner: Planner, bodies: Bodies): RoomSolver {
   const known = new Map<string, Rooms>()
 
   function solve(form: Question, separation: Metres, ask: Ask): Rooms {
-    const asked = form.kind !== 'own' && ask.back ? reverseForm(form) : form
-    const key = `${asked.kind === 'own' ? asked.key : Object.values(asked).join(' ')} ${separation} ${ask.slack} ${ask.need}`
+    const key = `${form.kind === 'own' ? form.key : Object.values(form).join(' ')} ${separation} ${ask.slack} ${ask.need}`
     const before = known.get(key)
     if (before) return before
-    const scene = asked.kind === 'own' ? asked.draw(separation) : drawn(asked, separation)
+    const scene = form.kind === 'own' ? form.draw(separation) : drawn(form, separation)
     // A pinch that cannot be drawn is one that nobody can pass, and nobody knows.
     const room = scene
       ? roomsIn(planner(scene, bodies, separation, { pausesAt: ask.need, drift, slack: ask.slack }))
@@ -81,8 +80,8 @@ export function roomSolver(planner: Planner, bodies: Bodies): RoomSolver {
     const taut = new Bracket()
     const slack = new Bracket()
     for (const free of combinations(pinch.free)) {
-      const narrow = pinch.build({ ...at(pinch.widths, 'low', ends), ...free })
-      const wide = pinch.build({ ...at(pinch.widths, 'high', ends), ...bounding(free) })
+      const narrow = asked(pinch, { ...at(pinch.widths, 'low', ends), ...free }, ask)
+      const wide = asked(pinch, { ...at(pinch.widths, 'high', ends), ...bounding(free) }, ask)
       const there = separations.map((separation) => solve(narrow, separation, ask))
       const hoped = separations.map((separation) => solve(wide, separation, ask))
       for (const [bracket, mode] of [
@@ -107,6 +106,12 @@ export function roomSolver(planner: Planner, bodies: Bodies): RoomSolver {
       return over(pinch, separations, ask, (dim, end) => dim[end])
     },
   }
+}
+
+/** The scene in the walk's direction, or the way back with its own run-up. */
+function asked(pinch: Pinch, dims: Record<string, number>, { back }: Ask): Question {
+  const form = pinch.build(dims)
+  return back && form.kind !== 'own' ? reverseForm({ ...form, lead: pinch.leadBack }) : form
 }
 
 const unknown: Room = { low: null, high: beyondUse, pauses: 0, nearest: null }

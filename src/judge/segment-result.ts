@@ -6,7 +6,7 @@ import { closedWindow } from './closed-window.ts'
 import { decideAt } from './decide-at.ts'
 import { type Finding, toCheck } from './finding.ts'
 import type { Gap } from './gap.ts'
-import type { SegmentResult, Verdict } from './result.ts'
+import type { Check, SegmentResult, Verdict } from './result.ts'
 import type { RoomSolver } from './rooms.ts'
 import { score } from './score.ts'
 import { type AtPair, type Judged, pairChecks } from './segment.ts'
@@ -31,7 +31,7 @@ export function segmentResult(
     score: score(verdict, findings, led),
     governing: governing?.id ?? null,
     sentence: sentenceOf(verdict, governing, gaps, segment.name),
-    checks: findings.map(toCheck),
+    checks: findings.map((one) => withBack(judged, one, at)),
     why: gaps.map(({ blocks, ...why }) => why),
     window:
       led && choice === null
@@ -54,6 +54,13 @@ function sentenceOf(verdict: Verdict, governing: Finding | null, gaps: readonly 
   if (verdict === 'not-known' && first) return first.text
   if (verdict === 'with-help') return `${name} is led by somebody else than the robot.`
   return `${name}: no check decides it.`
+}
+
+/** A pinch also says what the way back would have at the length shown. */
+function withBack({ pairs }: Judged, one: Finding, at: AtPair): Check {
+  const check = toCheck(one)
+  const back = at && pairs.find((pair) => pair.id === one.id && pair.feature === one.feature)?.back?.(at.leash)
+  return back ? { ...check, back } : check
 }
 
 function pinchesHere({ site }: Judged): Pinch[] {

@@ -27,6 +27,8 @@ export interface Pinch {
   widths: Readonly<Record<string, Dimension>>
   free: Readonly<Record<string, Dimension>>
   from: Interval[]
+  /** Straight run-up of the way back. */
+  leadBack: Metres
   /** Room taken off the certified end: an angle by 3-4-5 or plan is taken as square. */
   offLow: Metres
   /** The named form, or a scene of its own for a separation, both in metres and radians. */
@@ -129,6 +131,7 @@ function ofTurn(site: PinchSite, turn: Feature): Pinch | Lacking | null {
   if (!past) return { feature: turn, lacking: 'clear width after the corner' }
   const widths = { w1: width(before), w2: width(past) }
   const lead = leadBefore(site, null)
+  const leadBack = leadAfter(site, null)
   if (turn.kind === 'u-turn') {
     const k = read(turn, 'wallThickness', 'both')
     const e = read(turn, 'endDistance', 'low')
@@ -139,6 +142,7 @@ function ofTurn(site: PinchSite, turn: Feature): Pinch | Lacking | null {
       widths: { ...widths, e: width(e) },
       free: { k: free(k) },
       from: [before, past, k, e],
+      leadBack,
       offLow: 0,
       build: ({ w1 = 0, w2 = 0, k = 0, e = 0 }) => ({ kind: 'uturn', w1, w2, k, e, lead }),
     }
@@ -159,6 +163,7 @@ function ofTurn(site: PinchSite, turn: Feature): Pinch | Lacking | null {
     widths,
     free: { angle: bend },
     from: [before, past, angle],
+    leadBack,
     offLow: squared ? squareCost : 0,
     build: ({ w1 = 0, w2 = 0, angle = 0 }) => ({ kind: 'turn', w1, w2, angle, lead }),
   }
@@ -196,6 +201,7 @@ function ofFrame(site: PinchSite, feature: Feature): Pinch | Lacking {
     widths: { w: width(along), p: width(clear) },
     free: { t: free(depth) },
     from: [along, clear, depth],
+    leadBack: leadAfter(site, feature),
     offLow: 0,
     build: ({ w = 0, p = 0, t = 0 }) => ({ kind: 'sidedoor', w, p: Math.min(p, 3), t, lead, reverse: false }),
   }
@@ -220,6 +226,7 @@ function line(
     widths: { w: width(along), p: width(clear) },
     free: { t: depth },
     from,
+    leadBack: lead,
     offLow: 0,
     build: ({ w = 0, p = 0, t = 0 }) => {
       const gap = Math.min(p, w)
@@ -256,6 +263,7 @@ function ofObstruction(site: PinchSite, feature: Feature): Pinch | Lacking {
     widths: { w: width(along) },
     free: { j: free(depth), t: length ? free(length) : { low: 0.3, value: 0.3, high: 0.3 } },
     from: [along, depth, ...(length ? [length] : [])],
+    leadBack: leadAfter(site, feature),
     offLow: 0,
     build: ({ w = 0, j = 0, t = 0 }) => ({
       kind: 'indoor',
@@ -282,6 +290,7 @@ function ofChicane(site: PinchSite, feature: Feature): Pinch | Lacking {
     widths: { w: width(along) },
     free: { j: free(depth), s: free(spacing) },
     from: [along, depth, spacing],
+    leadBack: leadAfter(site, feature),
     offLow: 0,
     build: ({ w = 0, j = 0, s = 0 }) => ({
       kind: 'chicane',
@@ -304,6 +313,7 @@ function ofDeadEnd(site: PinchSite, feature: Feature): Pinch | Lacking {
     widths: { w: width(clear), e: width(depth) },
     free: {},
     from: [clear, depth],
+    leadBack: 0,
     offLow: 0,
     build: ({ w = 0, e = 0 }) => ({
       kind: 'own',
@@ -328,6 +338,7 @@ export function liftCar(site: PinchSite, feature: Feature): Pinch | null {
     widths: { p: width(clear), e: width(depth), w: width(across) },
     free: {},
     from,
+    leadBack: 0,
     offLow: 0,
     build: ({ p = 0, e = 0, w = 0 }) => ({
       kind: 'own',
@@ -354,6 +365,17 @@ function leadBefore({ segment, read }: PinchSite, feature: Feature | null): Metr
     if (!feature || one.along < end) start = Math.max(start, one.along + own)
   }
   return Math.min(longestLead, Math.max(0, end - start))
+}
+
+/** The run-up of the way back: from whatever pinch stands past it; for a turn on the stretch after it. */
+function leadAfter({ segment, after, read }: PinchSite, feature: Feature | null): Metres {
+  const on = feature ? segment : after
+  if (!on) return 0
+  const begin = feature ? (feature.along ?? Number.POSITIVE_INFINITY) : 0
+  let end = read(on, 'length', 'low')?.low ?? 0
+  for (const one of on.features)
+    if (one !== feature && isInTheWay(one) && (one.along ?? 0) >= begin) end = Math.min(end, one.along ?? 0)
+  return Math.min(longestLead, Math.max(0, end - begin))
 }
 
 function isInTheWay(feature: Feature): boolean {

@@ -159,7 +159,7 @@ describe('slope', () => {
     [0.0964, 'tight', 'at most 0.0999'],
     [0.0966, 'unsure', 'at most 0.1001'],
     [0.1036, 'fails', 'at least 0.1001'],
-  ] as const)('%d is %s: %s', (gradient, state) => {
+  ] as const)('%d is %s: %s', (gradient, state, _because) => {
     expect(states(gradient)).toEqual([state])
   })
   test('over 1:20 at the reading it asks that power lost is held', () => {

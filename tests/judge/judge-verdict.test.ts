@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest'
-import type { Answer, Segment } from '../../src/record/survey.ts'
+import type { Answer, Help, Segment } from '../../src/record/survey.ts'
 import { feature, type Judge, judged, judgedWalk, reading, says, stretch, wholeHelp, zone } from './build.ts'
 
 const kinds = (segment: Segment, options: Judge = {}) => judged(segment, options).why.map((one) => one.kind)
@@ -102,7 +102,7 @@ describe('told and by eye', () => {
 })
 
 describe('help', () => {
-  const door = (help?: object) =>
+  const door = (help?: Help) =>
     stretch(
       {
         features: [
@@ -127,7 +127,7 @@ describe('help', () => {
     expect(judged(door(wholeHelp), shut).verdict).toBe('with-help')
   })
   test('a failing check without help is do not use, with begun help not known', () => {
-    const noPlace = (help?: object) => {
+    const noPlace = (help?: Help) => {
       const one = door(help)
       const [first] = one.features
       return { ...one, features: [{ ...first, words: { ...first?.words, robotPlace: says('no') } }] } as Segment
@@ -137,7 +137,7 @@ describe('help', () => {
     expect(judged(noPlace(wholeHelp)).verdict).toBe('with-help')
   })
   test('a part led by somebody else asks three aspects and whole help', () => {
-    const led = (help?: object): Segment => ({
+    const led = (help?: Help): Segment => ({
       ...stretch(),
       ledBy: 'human-guide',
       words: { overhead: says('none'), step: says('none'), edge: says('none') },

@@ -9,6 +9,8 @@ export interface PairCheck {
   timed: boolean
   cell(leash: Metres, pace: MetresPerSecond): Cell
   finding(leash: Metres, pace: MetresPerSecond): Finding
+  /** The ratio of the way back at that length: shown, never judged here. */
+  back?(leash: Metres): Ratio
   /** What comes with it at this pair: the slack leash of a planned pause. */
   beside?(leash: Metres, pace: MetresPerSecond): Finding[]
 }

@@ -22,7 +22,7 @@ export function straightWidth(site: Site): Finding[] {
   const found: Finding[] = []
   if (width) {
     const at = segment.readings.width?.find((one) => one.id === width.ids[0])?.at
-    found.push(judged(site, segment.id, `Width at ${at ? `the ${at}` : segment.name}`, width, 0))
+    found.push(judged(site, segment.id, `Width ${at ? placed(at) : `at ${segment.name}`}`, width, 0))
   }
   for (const feature of segment.features) {
     if (!kind(feature.kind)?.feeds.includes('straight-width')) continue
@@ -35,6 +35,12 @@ export function straightWidth(site: Site): Finding[] {
     found.push(judged(site, feature.id, `Width at ${nameOf(feature)}`, clear, taken))
   }
   return found
+}
+
+/** "lockers" is at the lockers; "between the pillars" says it itself. */
+function placed(at: string): string {
+  if (/^(at|between|under|beside|past|near|by|behind|over|opposite|in|on) /i.test(at)) return at
+  return /^(the|a|an|\d)/i.test(at) ? `at ${at}` : `at the ${at}`
 }
 
 function judged({ setting }: Site, feature: string, subject: string, width: Interval, taken: number): Finding {

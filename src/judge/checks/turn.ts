@@ -1,7 +1,7 @@
 import { kind } from '../../catalogue/kinds.ts'
 import type { Lacking, Pinch, PinchSite } from '../../plan/pinches.ts'
 import { epsilon, type Finding, finding, ratioOf, roomState } from '../finding.ts'
-import type { Room, RoomSolver } from '../rooms.ts'
+import type { Room, RoomSolver, Rooms } from '../rooms.ts'
 import { read } from '../setting.ts'
 import { nameOf, type Site } from '../site.ts'
 import { greatestSeparation, leastSeparation } from '../team.ts'
@@ -31,7 +31,8 @@ export function isPinch(one: Pinch | Lacking): one is Pinch {
 
 /**
  * Turns, frames, pinches and obstructions: the room that the planner certifies, and the most there can be, at both ends
- * of every reading and over the separations of the length. In the walk's own direction. A slack pause counts only where
+ * of every reading and over the separations of the length. The walk's own direction governs; the way back is shown
+ * beside it. A slack pause counts only where
  * the handler is shown to stand, and never on a ramp, near a stair, edge or lift, or in a two-way crowd.
  */
 export function turns(
@@ -75,27 +76,31 @@ function pairOf(site: Site, pinch: Pinch, rooms: RoomSolver, nominal: PairCheck 
   const { team } = setting
   const need = team.card.leash.clearancePinch
   const pausing = mayPause(site, pinch)
-  const known = new Map<number, Solved>()
-  const solve = (leash: number): Solved => {
-    const before = known.get(leash)
+  const known = new Map<string, Solved>()
+  const solve = (leash: number, back = false): Solved => {
+    const key = `${leash} ${back}`
+    const before = known.get(key)
     if (before) return before
     const separations = [
       leastSeparation(team, leash, site.slope.steepest),
       greatestSeparation(team, leash, site.slope.steepest),
     ]
     const within = separations.filter((one): one is number => one !== null)
-    const { taut, slack } = rooms.room(pinch, within, { slack: pausing, need, band: frameBand, back: false })
-    const state = roomState(taut, need, frameBand)
-    let solved: Solved = { room: taut, state, pauses: 0 }
-    if (pausing && (state === 'fails' || state === 'unsure') && pauseCounts(team, leash, slack.nearest ?? 0)) {
-      const paused = roomState(slack, need, frameBand)
-      // A pause is a caution however wide the room.
-      if (paused === 'passes' || paused === 'tight')
-        solved = { room: slack, state: 'tight', pauses: Math.max(1, slack.pauses) }
-      else if (paused === 'unsure') solved = { room: { ...taut, high: slack.high }, state: 'unsure', pauses: 0 }
-    }
-    known.set(leash, solved)
+    const solved = solvedOf(rooms.room(pinch, within, { slack: pausing, need, band: frameBand, back }), leash)
+    known.set(key, solved)
     return solved
+  }
+  const solvedOf = ({ taut, slack }: Rooms, leash: number): Solved => {
+    const state = roomState(taut, need, frameBand)
+    const counts = pausing && (state === 'fails' || state === 'unsure')
+    if (!counts || !pauseCounts(team, leash, slack.nearest ?? 0)) return { room: taut, state, pauses: 0 }
+    const paused = roomState(slack, need, frameBand)
+    // A pause is a caution however wide the room.
+    if (paused === 'passes' || paused === 'tight')
+      return { room: slack, state: 'tight', pauses: Math.max(1, slack.pauses) }
+    return paused === 'unsure'
+      ? { room: { ...taut, high: slack.high }, state: 'unsure', pauses: 0 }
+      : { room: taut, state, pauses: 0 }
   }
   const demand = team.envelope + 2 * need
   const side = (end: number | null) => (end === null ? 0 : team.envelope + 2 * end)
@@ -143,6 +148,7 @@ function pairOf(site: Site, pinch: Pinch, rooms: RoomSolver, nominal: PairCheck 
       return cell
     },
     finding: whole,
+    back: (leash) => ratio(solve(leash, true).room),
     beside: (leash, pace) => {
       const { pauses, room } = solve(leash)
       return pauses > 0 ? [slackLeash(site, pinch.feature.id, room.nearest ?? 0, leash, pace)] : []
