@@ -1,4 +1,4 @@
-import { ErrorBoundary, LocationProvider, lazy, Route, Router } from 'preact-iso'
+import { ErrorBoundary, LocationProvider, lazy, Route, Router, useLocation } from 'preact-iso'
 import { UpdateReady } from './components/update-ready.tsx'
 import { VerdictPatterns } from './components/verdict-mark.tsx'
 import { NotFound } from './screens/not-found.tsx'
@@ -41,7 +41,13 @@ export function App() {
           <Route default component={NotFound} />
         </Router>
       </ErrorBoundary>
-      <UpdateReady ready={updateReady} take={takeUpdate} />
+      <Update />
     </LocationProvider>
   )
+}
+
+/** Never on the recording page: there the keys are where the prompt would stand. */
+function Update() {
+  const { path } = useLocation()
+  return /\/walk\/[^/]+$/.test(path) ? null : <UpdateReady ready={updateReady} take={takeUpdate} />
 }

@@ -1,3 +1,4 @@
+import { readFileSync } from 'node:fs'
 import { expect, type Page, test } from '@playwright/test'
 import { axeFinds } from './axe.ts'
 import { AppServer, OutsideWall, Phone } from './phone.ts'
@@ -85,5 +86,31 @@ test('the plan draws what the list says; the ladder and the sheets stand under t
     const saved = page.waitForEvent('download')
     await page.getByRole('button', { name: 'Save' }).click()
     expect((await saved).suggestedFilename()).toMatch(/venue\.txt$/)
+  })
+})
+
+test('a back-up brings a venue to another phone, at once in its list; a damaged one changes nothing', async () => {
+  let backUp = ''
+  await onDemo(/Larch/, async (page) => {
+    await page.goto(new URL('/settings', page.url()).href)
+    const saved = page.waitForEvent('download')
+    await page.getByRole('button', { name: 'Save a back-up' }).click()
+    backUp = readFileSync(await (await saved).path(), 'utf8')
+  })
+  await onDemo(/Fennel/, async (page) => {
+    await page.getByRole('link', { name: 'Venues' }).click()
+    await page.getByRole('link', { name: 'Settings and back-up' }).click()
+    const bring = (text: string) =>
+      page
+        .locator('input[type=file]')
+        .setInputFiles({ name: 'back-up.json', mimeType: 'application/json', buffer: Buffer.from(text) })
+    await bring(backUp.replace('Larch', 'Lurch'))
+    await expect(page.getByRole('alert')).toContainText('the checksum differs')
+    await bring(backUp)
+    await expect(page.getByText(/^Brought back: \d+ entries of 1 venues/)).toBeVisible()
+    await page.getByRole('link', { name: 'Venues' }).click()
+    await expect(page.getByRole('link', { name: /Larch/ })).toBeVisible()
+    await expect(page.getByRole('link', { name: /Fennel/ })).toBeVisible()
+    expect(await axeFinds(page)).toEqual([])
   })
 })

@@ -18,6 +18,13 @@ import type { Committed, EntryDraft, Session } from './session.ts'
 import { choices, readChoices } from './settings.ts'
 
 const sessions = new Map<string, Promise<Session>>()
+/** How each open session takes in what the store holds beyond it. */
+const catchingUp = new Map<string, () => Promise<void>>()
+
+/** After facts came in past the sessions (a file, a back-up): every open one shows them. */
+export async function catchUpSessions(): Promise<void> {
+  await Promise.all([...catchingUp.values()].map((catchUp) => catchUp()))
+}
 
 /** The session of a survey on this phone: one a page, so that going from screen to screen keeps undo and judgement. */
 export function openSession(survey: string): Promise<Session> {
@@ -39,8 +46,10 @@ async function start(store: Store, id: string): Promise<Session> {
   const seen = () => {
     survey.value = foldSurvey(log)
   }
+  const catchUp = () => store.catchUp(log).then(seen)
+  catchingUp.set(id, catchUp)
   store.listen((changed) => {
-    if (changed === id) void store.catchUp(log).then(seen)
+    if (changed === id) void catchUp()
   })
 
   // One act after the other, so that each is made durable against the log with the one before it in.

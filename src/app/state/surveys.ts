@@ -4,6 +4,7 @@ import { type Problem, readSurveyFile, writeSurveyFile } from '../../record/file
 import { allFacts, emptyLog } from '../../record/log.ts'
 import { nameVenue } from '../../record/operations/venue.ts'
 import { newId } from './new-id.ts'
+import { catchUpSessions } from './open-session.ts'
 import { phoneStore } from './phone.ts'
 import { choices } from './settings.ts'
 
@@ -39,6 +40,7 @@ export async function takeInFile(text: string): Promise<Begun> {
   if (!file.ok) return { ok: false, problems: file.problems }
   const taken = await (await phoneStore()).takeIn(allFacts(file.log))
   if (!taken.saved) return refused(taken)
+  await catchUpSessions()
   return { ok: true, survey: file.survey.survey, name: file.survey.view.name }
 }
 

@@ -4,6 +4,7 @@ import { FileKey } from '../../components/file-key.tsx'
 import { StatusLine } from '../../components/status-line.tsx'
 import { textOf } from '../../state/file-choice.ts'
 import { fileName, saveFile } from '../../state/hand-over.ts'
+import { catchUpSessions } from '../../state/open-session.ts'
 import { phoneStore } from '../../state/phone.ts'
 import { today } from '../../state/today.ts'
 
@@ -24,6 +25,7 @@ export function BackUpPart() {
     const chosen = await textOf(file, longest)
     if (!chosen.ok) return setSaid({ text: chosen.what, failed: true })
     const restored = await (await phoneStore()).restore(chosen.text)
+    if (restored.saved) await catchUpSessions()
     setSaid(
       restored.saved
         ? {
