@@ -24,7 +24,7 @@ export interface Certificate {
 /** Samples obey the kinematics to this, metres: arcs are exact, the rest is rounding. */
 const exact = 1e-6
 /** Refinement stops at moves this small; the half of it is what a certificate may lose. */
-const finest = 4e-4
+const finest = 1e-3
 
 /**
  * Recomputes a motion's clearance from its samples and checks it against every constraint of the statement: start and

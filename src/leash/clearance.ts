@@ -68,6 +68,10 @@ export const clearance: Planner = (scene, bodies, separation, options = {}) => {
     if (!found || found.certificate.clearance < 0) return nothing(high, taut.settled)
     return { ...answer(quest, found, high, options), decided: taut.settled }
   }
+  // Up to a right angle a slack leash gains nothing: the handler only walks at full stretch.
+  const closed = form?.kind === 'turn' && hasClosedTurn(form, bodies)
+  if (closed && taut.found && taut.found.certificate.clearance >= 0)
+    return { ...answer(quest, taut.found, high, options), decided: taut.settled }
   const slack = searchSlack(quest, taut.found, free, passes)
   return slackAnswer(quest, slack, high, free, taut.settled, options)
 }
@@ -80,7 +84,7 @@ function highOf(quest: Quest, taut: TautResult): Metres {
   const far = shortfall(quest.separation)
   const proved = taut.found?.certificate.clearance ?? Number.NEGATIVE_INFINITY
   const kind = quest.scene.form?.kind
-  const margin = kind === 'turn' || kind === 'chicane' || kind === 'indoor' ? 0.01 : 0.02
+  const margin = kind === 'turn' || kind === 'chicane' || kind === 'indoor' ? 0.012 : 0.025
   return proved >= taut.value + far / 3 ? Math.min(proved + margin, taut.value + far) : taut.value + far
 }
 

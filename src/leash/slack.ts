@@ -53,12 +53,12 @@ export function searchSlack(quest: Quest, taut: Found | null, enough: Metres, pa
     if (worth(n) >= enough - 0.003 || value + shortfall(quest.separation) < 0) continue
     if (n > 1 && value < (values[n - 1] as number) + 0.003 && worth(n) >= (values[n - 1] as number)) continue
     if (!cut || Math.abs(cut.tau - value) > 0.01) {
-      const tau = Math.max(0, value)
+      const tau = Math.max(0, value - 0.006)
       const again = tau > 0.02 ? settledField(quest, tau, value - depth, passes) : base
       settled = settled && again.settled
       cut = { field: again.field, taut: again.taut, tau: value, banned: new Uint8Array(again.field.count) }
     }
-    const layered = searchWith(quest, n, cut, passes)
+    const layered = searchWith(quest, n, cut, enough, passes)
     settled = settled && layered.settled
     found[n] = better(before, layered.found)
   }
@@ -73,10 +73,17 @@ interface Cut {
   banned: Uint8Array
 }
 
-function searchWith(quest: Quest, n: number, cut: Cut, passes: Passes): { found: Found | null; settled: boolean } {
+function searchWith(
+  quest: Quest,
+  n: number,
+  cut: Cut,
+  enough: Metres,
+  passes: Passes,
+): { found: Found | null; settled: boolean } {
   const { field, banned } = cut
   let settled = true
   let found: Found | null = null
+  let proofs = 0
   for (let ban = 0; ban <= mostBans; ban++) {
     const values = layersOf(quest, field, cut.taut, n, banned, passes)
     settled = settled && values.settled
@@ -95,7 +102,11 @@ function searchWith(quest: Quest, n: number, cut: Cut, passes: Passes): { found:
       continue
     }
     found = better(found, polishAndProve(quest, joined))
-    if ((found && found.certificate.clearance >= level) || rolled.pausedAt.length === 0) break
+    proofs++
+    if (rolled.pausedAt.length === 0) break
+    // Another place to pause is tried once where there may be much more to gain.
+    if (found && found.certificate.clearance >= Math.min(enough, value + shortfall(quest.separation)) - 0.012) break
+    if (found && found.certificate.clearance >= level && proofs >= 2) break
     for (const at of rolled.pausedAt) banAround(field, banned, at)
   }
   return { found, settled }
