@@ -17,8 +17,9 @@ test('one walk by touch alone: the network cut, the phone killed, nothing lost, 
   const server = new AppServer()
   const wall = new OutsideWall()
   const phone = new Phone(await wall.start(), { acceptDownloads: true })
+  let address = ''
   try {
-    const address = await server.start()
+    address = await server.start()
     let page = await phone.open()
     let surveyor = new Surveyor(page)
 
@@ -151,7 +152,10 @@ test('one walk by touch alone: the network cut, the phone killed, nothing lost, 
       await page.goBack()
     })
 
-    expect(wall.seen, 'requests that left for another machine').toEqual([])
+    expect(wall.left(), 'requests that left for another machine').toEqual([])
+    expect(phone.asked.length).toBeGreaterThan(0)
+    const elsewhere = phone.asked.filter((url) => !url.startsWith(address) && !/^(blob|data|about):/.test(url))
+    expect(elsewhere, 'requests of the app itself for another machine').toEqual([])
     console.log(`axe looked at: ${looked.join('; ')}`)
   } finally {
     await phone.close()

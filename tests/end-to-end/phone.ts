@@ -43,7 +43,12 @@ export class OutsideWall {
     this.seen.push(`${request.method} ${request.url}`)
     response.writeHead(502).end()
   })
-  readonly seen: string[] = []
+  private readonly seen: string[] = []
+
+  /** Requests for another machine that are not the browser's own. */
+  left(): string[] {
+    return this.seen.filter((request) => !browsersOwn.test(request))
+  }
 
   async start(): Promise<number> {
     this.server.on('connect', (request, socket) => {
@@ -59,10 +64,18 @@ export class OutsideWall {
   }
 }
 
+/**
+ * What the desktop browser asks of its maker by itself (sign-in, form filling, its own updates), whatever page is shown. The app could not
+ * ask these: its own policy lets it connect to its own address alone, and `Phone.asked` holds every request of its pages.
+ */
+const browsersOwn = /^(CONNECT |[A-Z]+ https?:\/\/)[\w-]+\.(google|googleapis|gvt1)\.com[:/]/
+
 /** A phone-sized Chromium with a profile that outlives the browser process. */
 export class Phone {
   readonly profile = mkdtempSync(join(tmpdir(), 'tautline-phone-'))
   context: BrowserContext | null = null
+  /** Addresses that the app's pages and its service worker asked for. */
+  readonly asked: string[] = []
 
   private readonly wallPort: number
   private readonly options: Parameters<typeof chromium.launchPersistentContext>[1]
@@ -88,6 +101,7 @@ export class Phone {
       isMobile: true,
       ...this.options,
     })
+    this.context.on('request', (request) => this.asked.push(request.url()))
     return this.context.pages()[0] ?? (await this.context.newPage())
   }
 
