@@ -25,7 +25,10 @@ export interface Rooms {
 
 /** What a run has solved already. */
 export interface RoomSolver {
-  /** Room at the ends of every width, at both ends and the value of every other measure, and at both separations. */
+  /**
+   * Room at the ends of every width, at both ends and the value of every other measure, and at both separations.
+   * @param separations least first.
+   */
   room(pinch: Pinch, separations: readonly Metres[], ask: Ask): Rooms
   /** Windows of segments that nothing but reaction and slope tells apart, by those. */
   grids: Map<string, Grid>
@@ -76,14 +79,15 @@ export function roomSolver(planner: Planner, bodies: Bodies): RoomSolver {
     return built.ok ? built.scene : null
   }
 
-  function over(pinch: Pinch, separations: readonly Metres[], ask: Ask, ends: Ends): Rooms {
+  /** @param searched scenes without a closed form: the optimistic end, a search too, is then taken at the longest separation alone, which bounds the least of both. */
+  function over(pinch: Pinch, separations: readonly Metres[], ask: Ask, ends: Ends, searched: boolean): Rooms {
     const taut = new Bracket()
     const slack = new Bracket()
     for (const free of combinations(pinch.free)) {
       const narrow = asked(pinch, { ...at(pinch.widths, 'low', ends), ...free }, ask)
       const wide = asked(pinch, { ...at(pinch.widths, 'high', ends), ...bounding(free) }, ask)
       const there = separations.map((separation) => solve(narrow, separation, ask))
-      const hoped = separations.map((separation) => solve(wide, separation, ask))
+      const hoped = (searched ? separations.slice(-1) : separations).map((one) => solve(wide, one, ask))
       for (const [bracket, mode] of [
         [taut, 'taut'],
         [slack, 'slack'],
@@ -99,11 +103,12 @@ export function roomSolver(planner: Planner, bodies: Bodies): RoomSolver {
     grids: new Map(),
     stops: new Map(),
     room(pinch, separations, ask) {
-      if (isSearched(pinch)) {
-        const coarse = over(pinch, separations, ask, rounded)
+      const searched = isSearched(pinch)
+      if (searched) {
+        const coarse = over(pinch, separations, ask, rounded, searched)
         if (isSettled(coarse, ask)) return coarse
       }
-      return over(pinch, separations, ask, (dim, end) => dim[end])
+      return over(pinch, separations, ask, (dim, end) => dim[end], searched)
     },
   }
 }

@@ -164,18 +164,18 @@ function ofTurn(site: PinchSite, turn: Feature): Pinch | Lacking | null {
     free: { angle: bend },
     from: [before, past, angle],
     leadBack,
-    offLow: squared ? squareCost : 0,
+    // Pinned under a right angle it costs nothing.
+    offLow: squared && most > square - 1e-9 ? squareCost : 0,
     build: ({ w1 = 0, w2 = 0, angle = 0 }) => ({ kind: 'turn', w1, w2, angle, lead }),
   }
 }
 
-/** Measured square by 3-4-5 or plan, in corners no narrower than those on which its cost was measured. */
+/** Measured square by 3-4-5 or plan (as it was taken, whatever its pin), in corners no narrower than those on which its cost was measured. */
 function isSquare(turn: Feature, angle: Interval, before: Interval, after: Interval): boolean {
   const by = (turn.readings.angle ?? []).filter((one) => angle.ids.includes(one.id))
   return (
     by.length > 0 &&
-    by.every((one) => one.instrument === 'square') &&
-    Math.abs(Math.abs(angle.value) - square) < 1e-3 &&
+    by.every((one) => one.instrument === 'square' && Math.abs(Math.abs(one.value) - square) < 1e-3) &&
     before.low >= 1 &&
     after.low >= 1
   )
