@@ -20,6 +20,11 @@ const suites = [
     command: ['vitest', 'run', '--config', 'tests/store/vitest.config.ts', ...vitestReport('store.json')],
   },
   {
+    name: 'office, on SQLite and PostgreSQL',
+    report: 'office.json',
+    command: ['vitest', 'run', '--config', 'tests/office/vitest.config.ts', ...vitestReport('office.json')],
+  },
+  {
     name: 'end to end, in Chromium',
     report: 'end-to-end.json',
     command: ['playwright', 'test', '--config', 'tests/end-to-end/playwright.config.ts'],

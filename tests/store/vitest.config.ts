@@ -1,5 +1,8 @@
 import { playwright } from '@vitest/browser-playwright'
 import { defineConfig } from 'vitest/config'
+import { chromiumArguments, findChromium } from '../../scripts/chromium.mjs'
+
+const path = findChromium()
 
 // The store is tried where it lives: in a real Chromium with its real IndexedDB.
 export default defineConfig({
@@ -14,16 +17,8 @@ export default defineConfig({
       screenshotFailures: false,
       provider: playwright({
         launchOptions: {
-          executablePath: process.env.CHROMIUM_PATH ?? '/usr/bin/chromium',
-          args: [
-            '--no-sandbox',
-            '--disable-gpu',
-            '--disable-quic',
-            '--no-first-run',
-            '--disable-background-networking',
-            '--disable-component-update',
-            '--disable-sync',
-          ],
+          ...(path ? { executablePath: path } : {}),
+          args: chromiumArguments,
         },
       }),
       instances: [
