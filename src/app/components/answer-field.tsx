@@ -1,6 +1,7 @@
 import type { Answer } from '../../record/survey.ts'
 import { dayWords } from './day-words.ts'
 import { SelectField } from './field.tsx'
+import { Rivals } from './rivals.tsx'
 import { SavedText } from './saved-text.tsx'
 
 export interface AnswerWord {
@@ -13,7 +14,10 @@ export function AnswerField(props: {
   label: string
   words: readonly AnswerWord[] | null
   answer: Answer | undefined
-  save(says: string): void
+  /** False: not saved. */
+  save(says: string): boolean | Promise<boolean>
+  /** This answer takes the place of everybody's. */
+  settle(says: string): boolean | Promise<boolean>
 }) {
   const { answer, words } = props
   const hint = answer ? [howWords[answer.how], answer.role, answer.person, answer.time && dayWords(answer.time)] : []
@@ -25,7 +29,7 @@ export function AnswerField(props: {
           label={props.label}
           {...(told ? { hint: told } : {})}
           value={answer?.says ?? ''}
-          change={(says) => says !== '' && props.save(says)}
+          change={(says) => says !== '' && void props.save(says)}
           choices={withOwn(words, answer)}
           open="Not answered"
         />
@@ -37,13 +41,13 @@ export function AnswerField(props: {
           save={(says) => says.trim() !== '' && props.save(says.trim())}
         />
       )}
-      {answer?.rivals?.map((rival) => (
-        <p key={`${rival.person} ${rival.says}`} class="trouble">
-          {rival.person ?? 'Somebody else'} says otherwise: {rival.says}. Both are kept.
-        </p>
-      ))}
+      {answer && <Rivals answer={answer} wordOf={(says) => wordOf(says, words)} settle={props.settle} />}
     </div>
   )
+}
+
+function wordOf(says: string, words: readonly AnswerWord[] | null): string {
+  return words?.find((one) => one.value === says)?.label ?? says
 }
 
 /** What stands is always among the choices, known or not. */

@@ -17,7 +17,7 @@ export function Field(
     value: string
     change(value: string): void
     /** Called when the field is left: the moment to save. */
-    leave?: () => void
+    leave?: () => unknown
     type?: 'text' | 'date' | 'time'
     inputMode?: 'text' | 'decimal'
     autocomplete?: string
@@ -33,7 +33,7 @@ export function Field(
           maxLength: props.maxLength ?? 400,
           value: props.value,
           onInput: (event: { currentTarget: HTMLInputElement }) => props.change(event.currentTarget.value),
-          onBlur: () => props.leave?.(),
+          onBlur: () => void props.leave?.(),
         }
         return props.type === 'date' || props.type === 'time' ? (
           <input type={props.type} {...shared} />
@@ -58,7 +58,16 @@ export function SelectField(
   return (
     <Labelled {...props}>
       {(described) => (
-        <select {...described} value={props.value} onChange={(event) => props.change(event.currentTarget.value)}>
+        <select
+          {...described}
+          value={props.value}
+          onChange={(event) => {
+            const chosen = event.currentTarget.value
+            // It shows the choice once it is kept, not before: what was refused must not look answered.
+            event.currentTarget.value = props.value
+            props.change(chosen)
+          }}
+        >
           {props.open !== undefined && <option value="">{props.open}</option>}
           {props.choices.map((choice) => (
             <option key={choice.value} value={choice.value}>

@@ -17,6 +17,7 @@ export function SettingsScreen() {
   const set = async (change: Partial<Choices>) => {
     const kept = await choose(change)
     setSaid(kept.saved ? { text: 'Saved', failed: false } : { text: `${kept.what} ${kept.whatToDo}`, failed: true })
+    return kept.saved
   }
   return (
     <main class="page">
@@ -29,7 +30,7 @@ export function SettingsScreen() {
             label="Your name"
             hint="Stands with every reading you take from now on."
             value={person}
-            save={(name) => void set({ person: name.trim() })}
+            save={(name) => set({ person: name.trim() })}
             autocomplete="name"
           />
           <Chips

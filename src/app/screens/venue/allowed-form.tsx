@@ -1,9 +1,11 @@
 import { useState } from 'preact/hooks'
+import { settleAnswer } from '../../../record/operations/answer.ts'
 import { setZoneWord } from '../../../record/operations/venue.ts'
 import type { Zone } from '../../../record/survey.ts'
 import { SubmitKey } from '../../components/big-key.tsx'
 import { dayWords } from '../../components/day-words.ts'
 import { Field } from '../../components/field.tsx'
+import { Rivals } from '../../components/rivals.tsx'
 import { Chips } from '../../components/strip/chips.tsx'
 import { answerNow, type Writer } from './writer.ts'
 
@@ -21,6 +23,17 @@ export function AllowedForm({ writer, zone }: { writer: Writer; zone: Zone }) {
     const answer = answerNow(writer, says, 'told', role.trim() ? { role: role.trim() } : {})
     if (await writer.write((log) => setZoneWord(log, zone.id, 'allowed', answer), `${zone.name}: robot ${says}`))
       setRole('')
+  }
+  /** A permission without the role that gave it is none: asked for where the record does not say it. */
+  const settle = (said: string) => {
+    const by = now?.says === said && now.role ? now.role : role.trim()
+    if (said !== 'not-asked' && by === '') {
+      setSays(said)
+      return setTrouble('Name the role that said so, then settle again.')
+    }
+    setTrouble(null)
+    const answer = answerNow(writer, said, 'told', by ? { role: by } : {})
+    void writer.write((log) => settleAnswer(log, zone.id, 'allowed', answer), `${zone.name}: settled, robot ${said}`)
   }
   return (
     <form
@@ -48,6 +61,7 @@ export function AllowedForm({ writer, zone }: { writer: Writer; zone: Zone }) {
           {now.time ? `, ${dayWords(now.time)}` : ''}
         </p>
       )}
+      {now && <Rivals answer={now} wordOf={(said) => (said === 'not-asked' ? 'not asked' : said)} settle={settle} />}
       {says !== null && (
         <>
           <Field label="Role that said so" value={role} change={setRole} trouble={trouble} needed />

@@ -62,10 +62,13 @@ function PlaceForm({ writer, view, place }: { writer: Writer; view: SurveyView; 
   const [trouble, setTrouble] = useState<string | null>(null)
   const move = (axis: 'x' | 'y', text: string) => {
     const read = parseQuantity(text, { quantity: 'length', unit: 'm', signed: true })
-    if (!read.ok) return setTrouble('Give metres on the plan, for example 12.5.')
+    if (!read.ok) {
+      setTrouble('Give metres on the plan, for example 12.5.')
+      return false
+    }
     setTrouble(null)
     const at = { x: place.x ?? 0, y: place.y ?? 0, [axis]: read.value }
-    void writer.write((log) => movePlace(log, place.id, at), `${place.name} on the plan`)
+    return writer.write((log) => movePlace(log, place.id, at), `${place.name} on the plan`)
   }
   return (
     <div class="stack">
@@ -74,7 +77,7 @@ function PlaceForm({ writer, view, place }: { writer: Writer; view: SurveyView; 
         value={place.name}
         save={(name) =>
           name.trim() !== '' &&
-          void writer.write((log) => setPlaceField(log, place.id, 'name', name.trim()), `name ${name.trim()}`)
+          writer.write((log) => setPlaceField(log, place.id, 'name', name.trim()), `name ${name.trim()}`)
         }
       />
       {view.floors.length > 0 && (

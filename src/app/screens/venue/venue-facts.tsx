@@ -10,7 +10,7 @@ import type { Writer } from './writer.ts'
 export function VenueFacts({ writer, view }: { writer: Writer; view: SurveyView }) {
   const hours = (change: { from?: string; to?: string }) => {
     const next = { from: '09:00', to: '17:00', ...view.hours, ...change }
-    void writer.write((log) => nameVenue(log, { hours: next }), `hours ${next.from} to ${next.to}`)
+    return writer.write((log) => nameVenue(log, { hours: next }), `hours ${next.from} to ${next.to}`)
   }
   return (
     <div class="stack">
@@ -18,25 +18,23 @@ export function VenueFacts({ writer, view }: { writer: Writer; view: SurveyView 
         label="Name of the venue"
         value={view.name}
         save={(name) =>
-          name.trim() !== '' && void writer.write((log) => nameVenue(log, { name: name.trim() }), `name ${name}`)
+          name.trim() !== '' && writer.write((log) => nameVenue(log, { name: name.trim() }), `name ${name}`)
         }
       />
       <SavedText
         label="Whom to ask at the venue"
         hint="A role and how to reach them. It stands on every sheet."
         value={view.contact ?? ''}
-        save={(contact) =>
-          void writer.write((log) => nameVenue(log, { contact: contact.trim() }), `contact ${contact}`)
-        }
+        save={(contact) => writer.write((log) => nameVenue(log, { contact: contact.trim() }), `contact ${contact}`)}
       />
       <div class="pair">
         <SavedText
           label="Judged from"
           type="time"
           value={view.hours?.from ?? ''}
-          save={(from) => from && hours({ from })}
+          save={(from) => from !== '' && hours({ from })}
         />
-        <SavedText label="until" type="time" value={view.hours?.to ?? ''} save={(to) => to && hours({ to })} />
+        <SavedText label="until" type="time" value={view.hours?.to ?? ''} save={(to) => to !== '' && hours({ to })} />
       </div>
       <SelectField
         label="Published limits"

@@ -1,10 +1,8 @@
-import { useState } from 'preact/hooks'
-import { setAlarm, setWalkWord } from '../../../record/operations/walk.ts'
+import { setAlarm } from '../../../record/operations/walk.ts'
 import type { Help, Walk } from '../../../record/survey.ts'
-import { AnswerField } from '../../components/answer-field.tsx'
 import { SavedText } from '../../components/saved-text.tsx'
-import { type HowKnown, HowKnownChips } from './how-known.tsx'
-import { answerNow, type Writer } from './writer.ts'
+import { AnswerItems } from './answer-items.tsx'
+import type { Writer } from './writer.ts'
 
 const items = [
   {
@@ -41,23 +39,9 @@ const alarm: readonly { field: keyof Help & string; label: string; type?: 'date'
 
 /** What a walk answers for itself: way out, help, rest, dead end, alarm. */
 export function WalkAnswers({ writer, walk }: { writer: Writer; walk: Walk }) {
-  const [how, setHow] = useState<HowKnown | null>(null)
-  const save = (item: string, label: string, says: string) => {
-    if (!how) return writer.say(`Not saved: first say how you know, then answer “${label}” again.`)
-    void writer.write((log) => setWalkWord(log, walk.id, item, answerNow(writer, says, how)), `${label}: ${says}`)
-  }
   return (
     <div class="stack">
-      <HowKnownChips chosen={how} choose={setHow} />
-      {items.map(({ item, label, words }) => (
-        <AnswerField
-          key={item}
-          label={label}
-          words={words}
-          answer={walk.words[item]}
-          save={(says) => save(item, label, says)}
-        />
-      ))}
+      <AnswerItems writer={writer} holder={walk} items={items} />
       <fieldset class="stack">
         <legend>When the alarm sounds</legend>
         {alarm.map(({ field, label, type }) => (
@@ -67,10 +51,7 @@ export function WalkAnswers({ writer, walk }: { writer: Writer; walk: Walk }) {
             type={type ?? 'text'}
             value={String(walk.alarm?.[field] ?? '')}
             save={(text) =>
-              void writer.write(
-                (log) => setAlarm(log, walk.id, withField(walk.alarm, field, text)),
-                `${label}: ${text}`,
-              )
+              writer.write((log) => setAlarm(log, walk.id, withField(walk.alarm, field, text)), `${label}: ${text}`)
             }
           />
         ))}

@@ -1,12 +1,10 @@
-import { useState } from 'preact/hooks'
-import { addZone, setZoneField, setZoneWord } from '../../../record/operations/venue.ts'
+import { addZone, setZoneField } from '../../../record/operations/venue.ts'
 import type { SurveyView, Zone } from '../../../record/survey.ts'
 import { Adder } from '../../components/adder.tsx'
-import { AnswerField } from '../../components/answer-field.tsx'
 import { AllowedForm } from './allowed-form.tsx'
-import { type HowKnown, HowKnownChips } from './how-known.tsx'
+import { AnswerItems } from './answer-items.tsx'
 import { Observations } from './observations.tsx'
-import { answerNow, type Writer } from './writer.ts'
+import type { Writer } from './writer.ts'
 
 const items = [
   {
@@ -59,18 +57,11 @@ export function Zones({ writer, view }: { writer: Writer; view: SurveyView }) {
 
 function allowedWords(zone: Zone): string {
   const says = zone.words.allowed?.says
+  if (zone.words.allowed?.rivals) return 'allowed or not: not agreed'
   return says === undefined || says === 'not-asked' ? 'not asked for' : says
 }
 
 function ZoneForm({ writer, zone }: { writer: Writer; zone: Zone }) {
-  const [how, setHow] = useState<HowKnown | null>(null)
-  const save = (item: string, label: string, says: string) => {
-    if (!how) return writer.say(`Not saved: first say how you know, then answer “${label}” again.`)
-    void writer.write(
-      (log) => setZoneWord(log, zone.id, item, answerNow(writer, says, how)),
-      `${zone.name}, ${label}: ${says}`,
-    )
-  }
   return (
     <div class="stack">
       <AllowedForm writer={writer} zone={zone} />
@@ -86,16 +77,7 @@ function ZoneForm({ writer, zone }: { writer: Writer; zone: Zone }) {
           void writer.write((log) => setZoneField(log, zone.id, 'nearOutsideDoor', on), `${zone.name}: outside door`)
         }
       />
-      <HowKnownChips chosen={how} choose={setHow} />
-      {items.map(({ item, label, words }) => (
-        <AnswerField
-          key={item}
-          label={label}
-          words={words}
-          answer={zone.words[item]}
-          save={(says) => save(item, label, says)}
-        />
-      ))}
+      <AnswerItems writer={writer} holder={zone} items={items} />
       <Observations writer={writer} zone={zone} />
     </div>
   )
