@@ -1,4 +1,5 @@
 import { judgeSurvey, runToEnd } from '../judge/judge.ts'
+import type { ClearanceAnswer, Planner } from '../leash/answer.ts'
 import { clearance } from '../leash/clearance.ts'
 import type { Survey } from '../record/survey.ts'
 import type { TeamCard } from '../record/team-card.ts'
@@ -8,9 +9,23 @@ import { validUntil } from '../sheets/content/valid-until.ts'
 import { toHtml } from '../sheets/html/to-html.ts'
 import type { Judged, MadeSheet, SheetOrder } from './office.ts'
 
+/** Scenes solved in this process; a new team card meets the same doors and corners in judging before and after. */
+const solved = new Map<string, ClearanceAnswer>()
+const mostSolved = 400
+
+const planner: Planner = (...asked) => {
+  const key = JSON.stringify(asked)
+  const before = solved.get(key)
+  if (before) return before
+  const answer = clearance(...asked)
+  if (solved.size >= mostSolved) solved.clear()
+  solved.set(key, answer)
+  return answer
+}
+
 /** The core as the office asks it: the same judge and the same sheets as on the phone. */
 export function judgeNow(survey: Survey, team: TeamCard, on: string): Judged {
-  const assessment = runToEnd(judgeSurvey(survey, { planner: clearance, team, on }))
+  const assessment = runToEnd(judgeSurvey(survey, { planner, team, on }))
   const ends = assessment.walks.map((walk) =>
     validUntil(scopeOf(survey, walk, assessment, { on: assessment.on }, team)),
   )
@@ -26,7 +41,7 @@ export function judgeNow(survey: Survey, team: TeamCard, on: string): Judged {
 }
 
 export function makeSheetNow({ survey, walk, form, number, on }: SheetOrder): MadeSheet {
-  const assessment = runToEnd(judgeSurvey(survey, { planner: clearance, on, walk }))
+  const assessment = runToEnd(judgeSurvey(survey, { planner, on, walk }))
   const result = assessment.walks[0]
   if (!result) return { ok: false, why: 'The walk was not judged.', whatToDo: 'Look at the walk on the screen.' }
   // A demo venue is judged as on its own day; the sheet is made on that day too.

@@ -57,6 +57,21 @@ export function obstacles(
   if (own.length === 0) found.push('no reviewer has signed it')
   else if (own.every((signature) => hasChangedSince(log, signature.have)))
     found.push('entries have come in since the reviewer signed: it must be reviewed again')
-  if ((survey.conflicts ?? []).length > 0) found.push('people do not agree on some of it: settle the disputes first')
+  // The file shows both versions of a dispute; a sheet that is acted on must not rest on one.
+  const disputed = (survey.conflicts ?? []).some(({ entity }) => [walk.id, null].includes(walkOf(log, entity)))
+  if (form !== 'file' && disputed) found.push('people do not agree on some of it: settle the disputes first')
   return found
+}
+
+/** The walk that an entity stands in; null: none, so that it counts for all. */
+function walkOf(log: FactLog, entity: string): string | null {
+  const visited = new Set<string>()
+  let at = entity
+  for (;;) {
+    const placement = log.places.of.get(at)
+    if (!placement || visited.has(at)) return null
+    if (placement.list === 'walks') return at
+    visited.add(at)
+    at = placement.parent
+  }
 }
