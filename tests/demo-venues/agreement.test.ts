@@ -9,21 +9,21 @@ import { type DemoVenue, demoVenues, expectedOf } from '../fixtures/demo/venues.
 /** Three figures, and what rounding of a figure worked by hand adds. */
 const withinUsual = 0.002
 
-const assessments = new Map<DemoVenue, Assessment>()
+const assessments = new Map<string, Assessment>()
 
-function assessmentOf(venue: DemoVenue): Assessment {
-  const known = assessments.get(venue)
+/** One walk judged by itself, once. */
+function assessmentOf(venue: DemoVenue, walk: string): Assessment {
+  const key = `${venue}/${walk}`
+  const known = assessments.get(key)
   if (known) return known
-  const judged = runToEnd(judgeSurvey(demoSurvey(venue), { planner: clearance }))
-  assessments.set(venue, judged)
+  const judged = runToEnd(judgeSurvey(demoSurvey(venue), { planner: clearance, walk }))
+  assessments.set(key, judged)
   return judged
 }
 
 function segmentOf(venue: DemoVenue, key: string): SegmentResult {
-  const [walk, segment] = key.split('/')
-  const found = assessmentOf(venue)
-    .walks.find((one) => one.id === walk)
-    ?.segments.find((one) => one.id === segment)
+  const [walk = '', segment] = key.split('/')
+  const found = assessmentOf(venue, walk).walks[0]?.segments.find((one) => one.id === segment)
   if (!found) throw new Error(`no segment ${key} was judged`)
   return found
 }
@@ -44,7 +44,10 @@ function anyOf(governing: string | string[] | null): (string | null)[] {
   return Array.isArray(governing) ? governing : [governing]
 }
 
-describe.each(demoVenues)('the judgement of %s agrees with its record', (venue) => {
+// A walk is judged whole at its first segment: side doors are searched at every end of their readings.
+const patience = { timeout: 900_000 }
+
+describe.each(demoVenues)('the judgement of %s agrees with its record', patience, (venue) => {
   const expected = expectedOf(venue)
 
   test.each(Object.entries(expected.segments))('%s', (key, wanted) => {
@@ -67,14 +70,15 @@ describe.each(demoVenues)('the judgement of %s agrees with its record', (venue) 
   })
 
   test.each(Object.entries(expected.walks))('walk %s', (id, wanted) => {
-    const walk = assessmentOf(venue).walks.find((one) => one.id === id)
+    const walk = assessmentOf(venue, id).walks[0]
     expect(walk?.verdict).toBe(wanted.verdict)
     expect(anyOf(wanted.governing)).toContain(walk?.governing)
     expect({ leash: walk?.leash, pace: walk?.pace }).toEqual({ leash: wanted.leash, pace: wanted.pace })
   })
 
   test('is of the day in the file, for the team in the file', () => {
-    const { on, team } = assessmentOf(venue)
+    const [first = ''] = Object.keys(expected.walks)
+    const { on, team } = assessmentOf(venue, first)
     expect(on).toBe('2026-11-30')
     expect(team.name).toBe(demoSurvey(venue).view.team?.name)
   })
