@@ -12,6 +12,8 @@ export interface Schema extends DBSchema {
   settings: { key: string; value: unknown }
   memo: { key: string; value: unknown }
   photos: { key: string; value: Photo }
+  /** What this phone knows of its office. */
+  office: { key: string; value: unknown }
 }
 
 export type FactKey = [survey: string, device: string, n: number]
@@ -47,20 +49,15 @@ export interface Photo {
 export type Database = IDBPDatabase<Schema>
 export type Writing = IDBPTransaction<Schema, StoreNames<Schema>[], 'readwrite'>
 
-const version = 1
+/** Each change of the stores has a number; a phone catches up from whichever it is at. */
+const version = 2
 
 /** Opens the database; rejects where the browser keeps none (private mode of some browsers). */
 export function openDatabase(name: string): Promise<Database> {
   return openDB<Schema>(name, version, {
-    upgrade(database) {
-      database.createObjectStore('facts', { keyPath: ['survey', 'device', 'n'] })
-      database.createObjectStore('marks', { keyPath: ['survey', 'device'] })
-      database.createObjectStore('surveys', { keyPath: 'survey' })
-      database.createObjectStore('snapshots', { keyPath: 'survey' })
-      database.createObjectStore('drafts')
-      database.createObjectStore('settings')
-      database.createObjectStore('memo')
-      database.createObjectStore('photos', { keyPath: 'id' })
+    upgrade(database, from) {
+      if (from < 1) makeFirstStores(database)
+      if (from < 2) database.createObjectStore('office')
     },
     // Another tab with a newer app wants to change the database: step aside, reads reopen it.
     blocking(_current, _blocked, event) {
@@ -80,4 +77,15 @@ export function openWriting(database: Database, stores: StoreNames<Schema>[]): W
   // Whoever writes awaits `done`; without this an abort would also be reported as unhandled.
   tx.done.catch(() => undefined)
   return tx
+}
+
+function makeFirstStores(database: Database): void {
+  database.createObjectStore('facts', { keyPath: ['survey', 'device', 'n'] })
+  database.createObjectStore('marks', { keyPath: ['survey', 'device'] })
+  database.createObjectStore('surveys', { keyPath: 'survey' })
+  database.createObjectStore('snapshots', { keyPath: 'survey' })
+  database.createObjectStore('drafts')
+  database.createObjectStore('settings')
+  database.createObjectStore('memo')
+  database.createObjectStore('photos', { keyPath: 'id' })
 }

@@ -66,6 +66,12 @@ export async function factsAfter(
   return parts.flat()
 }
 
+/** How far each device of a survey is held. */
+export async function seenOf(database: Database, survey: string): Promise<[device: string, n: number][]> {
+  const marks = await database.getAll('marks', keysUnder(survey))
+  return marks.map(({ device, n }) => [device, n])
+}
+
 /** Those of the facts that are not here yet, by device and number; trouble where one does not follow on. */
 export async function newFacts(tx: Writing, facts: readonly Fact[]): Promise<Fact[] | Trouble> {
   const sorted = [...facts].sort((a, b) => a.n - b.n)

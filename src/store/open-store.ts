@@ -1,10 +1,12 @@
+import { deleteDB } from 'idb'
 import type { Fact, FactDraft } from '../record/facts.ts'
 import { type FactLog, mergeFacts } from '../record/log.ts'
 import { backUp, type Restored, restore } from './back-up.ts'
 import { openDatabase, type Photo, type SurveyRow } from './database.ts'
 import { keepDraft, readDraft } from './drafts.ts'
-import { appendFacts, factsAfter, type Saved, type TakenIn, takeInFacts } from './facts.ts'
+import { appendFacts, factsAfter, type Saved, seenOf, type TakenIn, takeInFacts } from './facts.ts'
 import { clearMemo, keepMemo, readMemo, readWholeMemo } from './memo.ts'
+import { forgetOffice, recall, remember } from './office.ts'
 import { keepPhoto, readPhoto } from './photos.ts'
 import { changeSettings, deviceId, readSettings, renewDeviceId, type Settings } from './settings.ts'
 import { catchUp, openLog } from './snapshots.ts'
@@ -29,6 +31,8 @@ export interface Store {
   /** Takes into an open log what the store holds beyond it. */
   catchUp(log: FactLog): Promise<Fact[]>
   factsAfter(survey: string, have: ReadonlyMap<string, number>): Promise<Fact[]>
+  /** How far each device of a survey is held. */
+  seen(survey: string): Promise<[device: string, n: number][]>
   /** Hears that another tab has added to a survey; returns how to stop. */
   listen(heard: (survey: string) => void): () => void
   keepDraft(survey: string, draft: unknown): Promise<{ saved: true } | Trouble>
@@ -41,11 +45,17 @@ export interface Store {
   clearMemo(): Promise<void>
   keepPhoto(photo: Photo): Promise<{ saved: true } | Trouble>
   readPhoto(id: string): Promise<Photo | null>
+  /** A note about the office, or null. */
+  recall(key: string): Promise<unknown>
+  remember(key: string, value: unknown): Promise<{ saved: true } | Trouble>
+  forgetOffice(): Promise<void>
   state(): Promise<StorageState>
   askToPersist(): Promise<boolean | null>
   backUp(): Promise<string>
   restore(text: string): Promise<Restored>
   close(): void
+  /** Deletes everything this phone keeps. Other tabs can keep nothing more until they are loaded again. */
+  wipe(): Promise<void>
 }
 
 export type Opened = { ok: true; store: Store } | { ok: false; what: string; whatToDo: string }
@@ -84,6 +94,7 @@ export async function openStore(name = 'tautline'): Promise<Opened> {
       },
       catchUp: (log) => catchUp(database, log),
       factsAfter: (survey, have) => factsAfter(database, survey, have),
+      seen: (survey) => seenOf(database, survey),
       listen: tabs.listen,
       keepDraft: (survey, draft) => keepDraft(database, survey, draft),
       readDraft: (survey) => readDraft(database, survey),
@@ -95,6 +106,9 @@ export async function openStore(name = 'tautline'): Promise<Opened> {
       clearMemo: () => clearMemo(database),
       keepPhoto: (photo) => keepPhoto(database, photo),
       readPhoto: (id) => readPhoto(database, id),
+      recall: (key) => recall(database, key),
+      remember: (key, value) => remember(database, key, value),
+      forgetOffice: () => forgetOffice(database),
       state: () => storageState(),
       askToPersist: () => askToPersist(),
       backUp: () => backUp(database),
@@ -102,6 +116,10 @@ export async function openStore(name = 'tautline'): Promise<Opened> {
       close() {
         tabs.close()
         database.close()
+      },
+      async wipe() {
+        store.close()
+        await deleteDB(name)
       },
     }
     return { ok: true, store }

@@ -4,10 +4,12 @@ import type { PhoneStore } from './phone-store.ts'
 import { type PhotosSent, sendPhotos } from './photos.ts'
 
 /** The phone's side of the exchange: what the app's Sync screen and its background work come in by. */
-export { enrol } from './enrol.ts'
-export { exchangeSurvey } from './exchange.ts'
+export { enrol, signOut } from './enrol.ts'
+export { type Exchanged, exchangeSurvey } from './exchange.ts'
 export type { Line } from './line.ts'
 export type { PhoneStore } from './phone-store.ts'
+export type { Role } from './messages.ts'
+export { type OfficeVenue, officeVenues } from './office-venues.ts'
 export { startRetrying } from './retry.ts'
 export { saysWhere, type Whereabouts, whereabouts } from './whereabouts.ts'
 
@@ -18,6 +20,11 @@ export interface SurveySynced {
   photos: PhotosSent | null
 }
 
+/** How far one survey has come: its entries, then its photos. */
+export type Progress =
+  | ({ doing: 'entries' } & ExchangeProgress)
+  | { doing: 'photos'; survey: string; done: number; total: number }
+
 /**
  * Exchanges every survey given, entries first, then photos. Stops early where the office does not answer or has signed this
  * phone out: the rest would fare the same.
@@ -27,12 +34,14 @@ export async function syncAll(
   store: PhoneStore,
   surveys: readonly string[],
   now: () => string,
-  tell: (progress: ExchangeProgress) => void = () => undefined,
+  tell: (progress: Progress) => void = () => undefined,
 ): Promise<SurveySynced[]> {
   const results: SurveySynced[] = []
   for (const survey of surveys) {
-    const entries = await exchangeSurvey(line, store, survey, now, tell)
-    const photos = entries.ok ? await sendPhotos(line, store, survey) : null
+    const entries = await exchangeSurvey(line, store, survey, now, (progress) => tell({ doing: 'entries', ...progress }))
+    const photos = entries.ok
+      ? await sendPhotos(line, store, survey, (done, total) => tell({ doing: 'photos', survey, done, total }))
+      : null
     results.push({ survey, entries, photos })
     if (!entries.ok && (entries.kind === 'later' || entries.kind === 'signed-out')) break
   }

@@ -1,3 +1,4 @@
+import { malformedFact } from '../record/log.ts'
 import { ask, type Line } from './line.ts'
 import { firstPage, type Have, missingFrom, numberIn, type SyncReply, type SyncRequest, spoken } from './messages.ts'
 import type { PhoneStore } from './phone-store.ts'
@@ -53,6 +54,7 @@ export async function exchangeSurvey(
     if (!reply.ok) {
       if (reply.again) return { ok: false, kind: 'later', what: reply.what, whatToDo: 'It is tried again by itself.' }
       const { refusal } = reply
+      await keepNote(store, survey, { ...note, ack, sentAt: null })
       // The office holds less than it once said (an older back-up was brought back): it says from where.
       if (refusal.error === 'gap' && refusal.device !== undefined && refusal.next !== undefined && gaps++ < 100) {
         ack = { ...ack, [refusal.device]: refusal.next - 1 }
@@ -61,6 +63,14 @@ export async function exchangeSurvey(
       return { ok: false, kind: kindOf(refusal.error), what: refusal.what, whatToDo: refusal.whatToDo }
     }
     const { body } = reply
+    const fault = faultOf(survey, body)
+    if (fault)
+      return {
+        ok: false,
+        kind: 'refused',
+        what: `What the office sent cannot be read here (${fault}). Nothing of it was taken in; what is on this phone stays.`,
+        whatToDo: 'Renew the app, or ask the administrator. Until then share the survey as a file.',
+      }
     const taken = body.facts.length > 0 ? await store.takeIn(body.facts) : { saved: true as const }
     if (!taken.saved) return { ok: false, kind: 'refused', what: taken.what, whatToDo: taken.whatToDo }
     const grew = body.facts.length > 0 || isFurther(body.ack, ack)
@@ -68,7 +78,7 @@ export async function exchangeSurvey(
     sent += facts.filter((fact) => fact.n <= numberIn(ack, fact.device)).length
     got += body.facts.length
     const kept = await readNote(store, survey)
-    await keepNote(store, survey, { ...kept, ack, ackAt: body.at })
+    await keepNote(store, survey, { ...kept, ack, ackAt: body.at, sentAt: null })
     const left = missingFrom(ack, await store.factsAfter(survey, new Map(Object.entries(ack)))).length
     tell({ survey, sent, got, waiting: left })
     if (!body.more && left === 0) return { ok: true, sent, got, at: body.at }
@@ -80,6 +90,17 @@ export async function exchangeSurvey(
         whatToDo: 'It is tried again by itself.',
       }
   }
+}
+
+/** What is wrong with an answer, for the record's own gate; null: nothing. */
+function faultOf(survey: string, { ack, facts, at }: Partial<SyncReply>): string | null {
+  const marks = typeof ack === 'object' && ack !== null ? Object.values(ack) : [Number.NaN]
+  if (!marks.every(Number.isSafeInteger) || !Array.isArray(facts) || typeof at !== 'string') return 'another form'
+  for (const fact of facts) {
+    const refused = malformedFact(survey, fact)
+    if (refused) return `${refused.path}: expected ${refused.expected}, found ${refused.found}`
+  }
+  return null
 }
 
 function isFurther(now: Have, before: Have): boolean {

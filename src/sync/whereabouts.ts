@@ -6,7 +6,7 @@ export interface SyncNote {
   /** What the office said it holds, when last it spoke. */
   ack: Have
   ackAt: string | null
-  /** When a message last went out. */
+  /** When a message went out that no answer has come to. */
   sentAt: string | null
   /** Photos that the office has. */
   photos: string[]
@@ -34,7 +34,7 @@ export async function whereabouts(store: PhoneStore, survey: string): Promise<Wh
   const { ack, ackAt, sentAt } = await readNote(store, survey)
   const waiting = missingFrom(ack, await store.factsAfter(survey, new Map(Object.entries(ack)))).length
   if (waiting === 0 && ackAt !== null) return { where: 'office', at: ackAt }
-  if (sentAt !== null && (ackAt === null || sentAt > ackAt)) return { where: 'sent', waiting, at: sentAt }
+  if (sentAt !== null) return { where: 'sent', waiting, at: sentAt }
   return { where: 'phone', waiting, lastAtOffice: ackAt }
 }
 
