@@ -1,7 +1,6 @@
-import { type FastifyInstance, Type } from './fastify.ts'
+import { Type } from './fastify.ts'
 
-/** Pieces of the routes' schemas. Everything that comes in is bounded. */
-export type App = FastifyInstance
+// Pieces of the routes' schemas. Everything that comes in is bounded.
 
 /** A text for a column: no NUL, which PostgreSQL cannot keep. */
 export const text = (most: number, least = 1) =>
