@@ -15,6 +15,7 @@ const types = {
   '.json': 'application/json; charset=utf-8',
   '.png': 'image/png',
   '.svg': 'image/svg+xml',
+  '.txt': 'text/plain; charset=utf-8',
   '.wasm': 'application/wasm',
   '.webmanifest': 'application/manifest+json; charset=utf-8',
 }

@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto'
 import preact from '@preact/preset-vite'
 import { defineConfig, type Plugin } from 'vite'
 import { VitePWA } from 'vite-plugin-pwa'
+import { extras } from '../../scripts/extras.ts'
 import { style } from '../sheets/html/style.ts'
 
 /** Paths are from this folder: the page lives in src/app, the build goes to dist. */
@@ -20,6 +21,7 @@ export default defineConfig({
   plugins: [
     preact({ reactAliasesEnabled: false }),
     contentPolicy(),
+    extras(),
     VitePWA({
       strategies: 'injectManifest',
       srcDir: '../service-worker',
@@ -30,7 +32,7 @@ export default defineConfig({
       manifest: false,
       injectManifest: {
         globPatterns: ['**/*.{js,css,html,svg,webmanifest}'],
-        globIgnores: ['cli.js', 'sw.js'],
+        globIgnores: ['cli.js', 'sw.js', 'extras/**'],
       },
     }),
   ],

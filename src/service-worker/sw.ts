@@ -8,7 +8,13 @@ declare const self: ServiceWorkerGlobalScope & { __WB_MANIFEST: { url: string; r
 precacheAndRoute(self.__WB_MANIFEST)
 cleanupOutdatedCaches()
 
-// Every address is the one page.
+// What a person took besides lies in a cache that the page fills and empties; each set of it has an address of its own.
+registerRoute(
+  ({ url }) => url.origin === location.origin && url.pathname.startsWith('/extras/'),
+  async ({ request }) => (await caches.match(request.url)) ?? fetch(request),
+)
+
+// Every other address is the one page.
 registerRoute(new NavigationRoute(createHandlerBoundToURL('/index.html')))
 
 // The very first visit is served from here at once, so that it can go on without a network.

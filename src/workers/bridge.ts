@@ -2,9 +2,12 @@ import type { Assessment, JudgeProgress } from '../judge/result.ts'
 import type { Survey } from '../record/survey.ts'
 import type { FromJudge, Memo, ToJudge } from './messages.ts'
 
+export type { SheetAnswer, SheetOrder } from './sheet-messages.ts'
+export { writeSheet } from './sheet-writer.ts'
+
 /**
- * The only door to the workers. One worker, one question at a time, the newest first: what a person looks at now is judged
- * before what they left. A question that is interrupted is taken up again; the planner remembers what it had solved.
+ * The only door to the workers: sheets are written through the one above, judged is here. One worker, one question at a
+ * time, the newest first: what a person looks at now is judged before what they left. A question that is interrupted is taken up again; the planner remembers what it had solved.
  */
 export type Answer = { ok: true; assessment: Assessment } | { ok: false; problem: string }
 

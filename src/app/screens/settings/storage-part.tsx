@@ -1,6 +1,7 @@
 import { useEffect, useState } from 'preact/hooks'
 import type { StorageState } from '../../../store/storage-state.ts'
 import { BigKey } from '../../components/big-key.tsx'
+import { ExtrasPart } from '../../components/extras-part.tsx'
 import { phoneStore } from '../../state/phone.ts'
 
 /** How this browser keeps what is on the phone, in words. */
@@ -52,6 +53,7 @@ export function StoragePart() {
         <BigKey press={() => void ask()}>Ask the browser to keep it</BigKey>
       )}
       <p role="status">{said}</p>
+      <ExtrasPart />
     </section>
   )
 }

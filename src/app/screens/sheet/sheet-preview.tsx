@@ -1,22 +1,21 @@
-import { useEffect, useMemo, useRef, useState } from 'preact/hooks'
-import { lint } from '../../../sheets/content/lint.ts'
+import { useEffect, useRef, useState } from 'preact/hooks'
 import type { Outline } from '../../../sheets/content/tree.ts'
 import { BigKey } from '../../components/big-key.tsx'
-import { fileName, saveFile, shareFile, sharesFiles } from '../../state/hand-over.ts'
-import type { SheetForm, Source } from './forms.ts'
+import { fileName } from '../../state/hand-over.ts'
+import type { Source, TextForm } from './forms.ts'
+import { HandOverKeys } from './hand-over-keys.tsx'
 
-/** What the sheet says, exactly as it is handed over; its keys; what its words still lack. */
+/** What the sheet says, exactly as it is handed over, and its keys. */
 export function SheetPreview(props: {
   outline: Outline
   source: Source
-  form: SheetForm
+  form: TextForm
   name: string
   say(text: string): void
 }) {
   const { outline, source, form, say } = props
   const frame = useRef<HTMLIFrameElement>(null)
   const [written, setWritten] = useState<{ form: string; text: string } | null>(null)
-  const findings = useMemo(() => lint(outline), [outline])
 
   useEffect(() => {
     let wanted = true
@@ -34,33 +33,9 @@ export function SheetPreview(props: {
   const file = { name: fileName(props.name, form.ending), type: form.type, text }
   return (
     <div class="stack">
-      <div class="keys">
-        <BigKey
-          primary
-          press={() => {
-            saveFile(file)
-            say(`Given to the browser to save: ${file.name}`)
-          }}
-        >
-          Save
-        </BigKey>
-        {sharesFiles() && (
-          <BigKey press={async () => say((await shareFile(file)) ? 'Handed over.' : 'Not handed over.')}>Share</BigKey>
-        )}
+      <HandOverKeys file={file} say={say}>
         {form.id === 'html' && <BigKey press={() => frame.current?.contentWindow?.print()}>Print</BigKey>}
-      </div>
-      {findings.length > 0 && (
-        <details>
-          <summary>Words to look at: {findings.length}</summary>
-          <ul class="plain-list">
-            {findings.map((finding) => (
-              <li key={`${finding.where} ${finding.text} ${finding.problem}`}>
-                {finding.where}: “{finding.text}”: {finding.problem}. {finding.whatToDo}
-              </li>
-            ))}
-          </ul>
-        </details>
-      )}
+      </HandOverKeys>
       {form.id === 'html' ? (
         // No script runs in it; the same origin only lets it be printed.
         <iframe

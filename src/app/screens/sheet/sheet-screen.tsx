@@ -1,13 +1,18 @@
 import './sheet.css'
 import { useMemo, useState } from 'preact/hooks'
+import { lint } from '../../../sheets/content/lint.ts'
 import { outline } from '../../../sheets/content/outline.ts'
 import type { Outline, Reader, Refusal } from '../../../sheets/content/tree.ts'
+import { ExtrasPart } from '../../components/extras-part.tsx'
 import { PageHead } from '../../components/page-head.tsx'
 import { StatusLine } from '../../components/status-line.tsx'
 import { Chips } from '../../components/strip/chips.tsx'
+import { extras } from '../../state/extras.ts'
 import type { Session } from '../../state/session.ts'
 import { today } from '../../state/today.ts'
-import { sheetForms } from './forms.ts'
+import { type SheetForm, sheetForms } from './forms.ts'
+import { Findings, NoSheet } from './no-sheet.tsx'
+import { SheetFile } from './sheet-file.tsx'
 import { SheetPreview } from './sheet-preview.tsx'
 
 const readers: readonly { value: Reader; label: string }[] = [
@@ -32,8 +37,15 @@ export function SheetScreen({ session, walk: id }: { session: Session; walk: str
       judgement.stale || !assessment || !result ? null : outline(survey, result, assessment, reader, { on: today() }),
     [judgement.stale, survey, assessment, result, reader],
   )
+  const findings = useMemo(() => (written?.kind === 'outline' ? lint(written) : []), [written])
   const offered = sheetForms.filter(({ readers: only }) => !only || only.includes(reader))
   const chosen = offered.find((one) => one.id === form) ?? offered[0]
+
+  const toVenue = (
+    <p>
+      <a href={`/venue/${survey.survey}`}>Marks of this walk are made on the venue’s page.</a>
+    </p>
+  )
 
   return (
     <main class="page wide">
@@ -44,13 +56,14 @@ export function SheetScreen({ session, walk: id }: { session: Session; walk: str
           <Chips legend="For" choices={readers} chosen={reader} choose={(one) => setReader(one as Reader)} />
           <Chips
             legend="As"
-            choices={offered.map(({ id: value, label }) => ({ value, label }))}
+            choices={offered.map((one) => ({ value: one.id, label: labelOf(one) }))}
             chosen={chosen?.id ?? null}
             choose={setForm}
           />
           <p class="soft">
             A sheet names the client’s measurements or your readings. Hand it only to the person it is for.
           </p>
+          <ExtrasPart />
         </div>
         {judgement.problem ? (
           <p class="trouble" role="alert">
@@ -59,17 +72,39 @@ export function SheetScreen({ session, walk: id }: { session: Session; walk: str
         ) : written === null ? (
           <p role="status">Judging first</p>
         ) : written.kind === 'refusal' ? (
-          <NoSheet refusal={written} address={`/venue/${survey.survey}`} />
+          <div class="stack">
+            <NoSheet refusal={written} title="No sheet yet" />
+            {toVenue}
+          </div>
+        ) : reader === 'client' && findings.length > 0 ? (
+          <section class="stack" aria-labelledby="unfit">
+            <h2 id="unfit">Not fit for the client yet</h2>
+            <p>These words cannot be used by a person who does not look. Change them on the venue’s page.</p>
+            <Findings findings={findings} />
+            {toVenue}
+          </section>
         ) : (
           chosen &&
           assessment && (
-            <SheetPreview
-              outline={written}
-              source={{ survey, assessment, walk: id }}
-              form={chosen}
-              name={`${name} ${reader}`}
-              say={setSaid}
-            />
+            <div class="stack">
+              {'write' in chosen ? (
+                <SheetPreview
+                  outline={written}
+                  source={{ survey, assessment, walk: id }}
+                  form={chosen}
+                  name={`${name} ${reader}`}
+                  say={setSaid}
+                />
+              ) : (
+                <SheetFile outline={written} form={chosen} name={`${name} ${reader}`} say={setSaid} />
+              )}
+              {findings.length > 0 && (
+                <details>
+                  <summary>Words to look at: {findings.length}</summary>
+                  <Findings findings={findings} />
+                </details>
+              )}
+            </div>
           )
         )}
       </div>
@@ -77,31 +112,9 @@ export function SheetScreen({ session, walk: id }: { session: Session; walk: str
   )
 }
 
-/** Why there is none, and what would change that. */
-function NoSheet({ refusal, address }: { refusal: Refusal; address: string }) {
-  return (
-    <section class="stack" aria-labelledby="none">
-      <h2 id="none">No sheet yet</h2>
-      <p>{sentence(refusal.why)}</p>
-      {refusal.missing.length > 0 && (
-        <>
-          <p>Missing:</p>
-          <ul class="plain-list">
-            {refusal.missing.map((one) => (
-              <li key={one}>{one}</li>
-            ))}
-          </ul>
-        </>
-      )}
-      <p>{sentence(refusal.whatToDo)}</p>
-      <p>
-        <a href={address}>Marks of this walk are made on the venue’s page.</a>
-      </p>
-    </section>
-  )
-}
-
-function sentence(text: string): string {
-  const begun = text.charAt(0).toUpperCase() + text.slice(1)
-  return /[.!?]$/.test(begun) ? begun : `${begun}.`
+/** A key says by itself that it cannot write yet. */
+function labelOf(form: SheetForm): string {
+  return 'order' in form && form.needsExtras && extras.value.kind !== 'here'
+    ? `${form.label}: needs the extras`
+    : form.label
 }
