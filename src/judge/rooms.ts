@@ -1,6 +1,6 @@
 import type { Scene, SceneForm } from '../geometry/scene.ts'
 import type { Bodies, ClearanceAnswer, Motion, Planner } from '../leash/answer.ts'
-import type { Dimension, OwnScene, Pinch } from '../plan/pinches.ts'
+import type { Dimension, OwnScene, Pinch } from '../plan/pinch.ts'
 import { buildScene, reverseForm } from '../plan/scenes.ts'
 import type { Metres } from '../units/quantity.ts'
 import type { StopsReckoned } from './checks/stop.ts'

@@ -1,4 +1,5 @@
-import { type Pinch, pinchesOf } from '../plan/pinches.ts'
+import type { Pinch } from '../plan/pinch.ts'
+import { pinchesOf } from '../plan/pinches.ts'
 import { missingAspects } from './answered.ts'
 import { cautionsOf } from './cautions.ts'
 import { isPinch, pinchSite } from './checks/turn.ts'

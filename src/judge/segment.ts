@@ -1,4 +1,5 @@
-import { type Pinch, pinchesOf } from '../plan/pinches.ts'
+import type { Pinch } from '../plan/pinch.ts'
+import { pinchesOf } from '../plan/pinches.ts'
 import type { Metres, MetresPerSecond } from '../units/quantity.ts'
 import { answered, conflicts } from './answered.ts'
 import { cautioned } from './cautions.ts'

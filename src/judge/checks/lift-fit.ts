@@ -1,4 +1,5 @@
-import { liftCar, type Pinch } from '../../plan/pinches.ts'
+import type { Pinch } from '../../plan/pinch.ts'
+import { liftCar } from '../../plan/pinch-rooms.ts'
 import { type Finding, finding, ratioOf, roomState, stateOf } from '../finding.ts'
 import type { RoomSolver } from '../rooms.ts'
 import { read } from '../setting.ts'

@@ -1,5 +1,5 @@
 import { kind } from '../../catalogue/kinds.ts'
-import type { Lacking, Pinch, PinchSite } from '../../plan/pinches.ts'
+import type { Lacking, Pinch, PinchSite } from '../../plan/pinch.ts'
 import { epsilon, type Finding, finding, ratioOf, roomState } from '../finding.ts'
 import type { Room, RoomSolver, Rooms } from '../rooms.ts'
 import { read } from '../setting.ts'
