@@ -1,10 +1,12 @@
 import type { Attribute } from '../catalogue/kind.ts'
 import { kind } from '../catalogue/kinds.ts'
 import { type Aspect, aspects, aspectsLedOtherwise, type Item, items, neverInherited } from '../record/answers.ts'
-import type { Answer, Feature } from '../record/survey.ts'
+import { root } from '../record/placement.ts'
+import type { Answer, Conflict, Feature, Reading } from '../record/survey.ts'
 import { doorWays } from './checks/doors.ts'
 import type { Gap } from './gap.ts'
 import type { Harm } from './result.ts'
+import { read, type Setting } from './setting.ts'
 import { featuresOf, nameOf, type Site } from './site.ts'
 
 /** What nobody answered, or answered by hearsay: unknown is never a pass. */
@@ -76,7 +78,7 @@ function aspectGaps(site: Site): Gap[] {
   return found
 }
 
-function itemGaps({ segment }: Site, item: Item, aspect: Aspect): Gap[] {
+function itemGaps({ segment, setting }: Site, item: Item, aspect: Aspect): Gap[] {
   const answer = segment.words[item]
   const name = itemNames[item]
   if (!answer) return [unanswered(aspect, `${segment.name}: nobody answered ${name}.`)]
@@ -84,9 +86,11 @@ function itemGaps({ segment }: Site, item: Item, aspect: Aspect): Gap[] {
   const known: readonly string[] | null = items[item].says
   if (known && !known.includes(answer.says))
     found.push(unanswered(aspect, `${segment.name}: ${name} says "${answer.says}", which is no answer to it.`))
-  if (answer.says === 'listed' && !featuresOf({ segment }).some((one) => kind(one.kind)?.aspect === aspect))
+  if (answer.says === 'listed' && !segment.features.some((one) => lists(item, aspect, one)))
     found.push(unanswered(aspect, `${segment.name}: ${name} is said to be listed, and nothing is.`))
-  if (item === 'overhead' && answer.says === 'none' && !(segment.readings.overhead ?? []).length)
+  // A thing on a wall says nothing of what hangs above the way.
+  const heightListed = answer.says === 'listed' && segment.features.some((one) => hasHeight(one))
+  if (item === 'overhead' && !heightListed && !read(setting, segment, 'overhead', 'low'))
     found.push(unanswered(aspect, `${segment.name}: nobody said to what height overhead was swept.`))
   if (neverInherited.includes(item)) {
     if (answer.how === 'inherited')
@@ -102,6 +106,17 @@ function featureGaps(site: Site): Gap[] {
   const found: Gap[] = []
   for (const feature of featuresOf(site)) {
     const row = kind(feature.kind)
+    const turning = feature === site.segment.turn
+    if (row && turning !== turnKinds.has(row.id) && !(turning && row.id === 'dead-end'))
+      found.push(
+        unanswered(
+          undefined,
+          turning
+            ? `${nameOf(feature)}: entered as the turn at the end, where nothing judges it.`
+            : `${nameOf(feature)}: entered along the way; a turn ends its part.`,
+          'trap',
+        ),
+      )
     if (!row) {
       found.push(unanswered(undefined, `${feature.name ?? feature.kind}: no kind that this catalogue knows.`, 'fall'))
       continue
@@ -113,7 +128,7 @@ function featureGaps(site: Site): Gap[] {
       const name = `${nameOf(feature)}: ${attribute.name}`
       const aspect = row.aspect ?? undefined
       if (attribute.type === 'quantity') {
-        if (isRequired(attribute, feature) && !(feature.readings[attribute.id] ?? []).length)
+        if (isRequired(attribute, feature) && !read(site.setting, feature, attribute.id, 'both'))
           found.push(unanswered(aspect, `${name}: nobody measured it.`, row.harm))
         continue
       }
@@ -125,11 +140,26 @@ function featureGaps(site: Site): Gap[] {
       if (attribute.says && !attribute.says.includes(answer.says))
         found.push(unanswered(aspect, `${name} says "${answer.says}", which is no answer to it.`, row.harm))
       if (differs(answer)) found.push(differ(aspect, `${name}: answers differ.`, row.harm))
-      if (strict && attribute.says && isRequired(attribute, feature) && isHearsay(answer))
-        found.push(told(aspect, `${name} was ${heard(answer)}, nobody looked.`, row.harm))
+      if (!strict || !attribute.says || !isRequired(attribute, feature)) continue
+      if (isHearsay(answer)) found.push(told(aspect, `${name} was ${heard(answer)}, nobody looked.`, row.harm))
+      if (answer.how === 'inherited')
+        found.push(unanswered(aspect, `${name} is never taken over from the stretch before.`, row.harm))
+      if (answer.tooQuick) found.push(unanswered(aspect, `${name} was swept too quickly.`, row.harm))
     }
   }
   return found
+}
+
+const turnKinds = new Set(['turn', 'u-turn'])
+
+/** Whether a feature is an answer to an item that says "listed". */
+function lists(item: Item, aspect: Aspect, { kind: id }: Feature): boolean {
+  return item === 'slots' ? id === 'grating' || id === 'gap' : kind(id)?.aspect === aspect
+}
+
+function hasHeight({ kind: id }: Feature): boolean {
+  const row = kind(id)
+  return row?.aspect === 'overhead' && row.feeds.includes('overhead')
 }
 
 /** Asked of this feature: always, or where another answer of it says so. A door fixed open is not handled at all. */
@@ -159,8 +189,12 @@ function zoneGaps({ segment, zone, around, led }: Site): Gap[] {
   if (around.crowd === null) found.push(hours(`${name}: nobody observed the crowd at these hours.`, 'road'))
   if (around.noise === null) found.push(hours(`${name}: nobody observed the noise at these hours.`, 'comfort'))
   if (around.unseen) found.push(hours(`${name}: part of these hours was not observed.`, 'road'))
-  for (const [item, answer] of Object.entries(zone?.words ?? {}))
-    if (differs(answer)) found.push(differ(undefined, `${name}: answers to ${item} differ.`, 'comfort'))
+  const magnet = zone?.words.magnet?.says
+  if (zone && magnet !== 'yes' && magnet !== 'no')
+    found.push(unanswered(undefined, `${name}: nobody answered whether a strong magnet is near.`, 'trap'))
+  for (const { words } of [...(zone ? [zone] : []), ...around.seen])
+    for (const [item, answer] of Object.entries(words))
+      if (differs(answer)) found.push(differ(undefined, `${name}: answers to ${item} differ.`, 'comfort'))
   return found
 }
 
@@ -182,13 +216,27 @@ function cardGaps({ setting, segment }: Site): Gap[] {
 /** Fields of a record whose versions move nothing that is judged. */
 const idle = new Set(['name', 'note', 'photos', 'startSign', 'what'])
 
-/** Versions of things on this segment that nobody has settled. */
-export function conflicts(site: Site): Gap[] {
-  const own = new Set([site.segment.id, ...featuresOf(site).map((one) => one.id), ...(site.zone ? [site.zone.id] : [])])
-  return site.setting.conflicts
-    .filter((one) => own.has(one.entity) && !idle.has(one.field) && !one.field.startsWith('photo'))
-    .filter((one) => !one.field.startsWith('word/'))
-    .map((one) => differ(undefined, `${site.segment.name}: two versions of ${one.field}.`, 'fall'))
+/** What of the survey itself every judgement is made with. */
+const ofAll = new Set(['team', 'hours', 'code', 'instruments'])
+
+/** Versions of things on this segment, or of what all is judged with, that nobody has settled. */
+export function conflicts({ segment, zone, around, setting }: Site): Gap[] {
+  const holders = [segment, ...featuresOf({ segment }), ...around.seen]
+  const own = new Set([...holders.flatMap(idsOf), ...(zone ? [zone.id] : [])])
+  return unsettled(setting, (one) => own.has(one.entity) || (one.entity === root && ofAll.has(one.field))).map((one) =>
+    differ(undefined, `${segment.name}: two versions of ${one.field}.`, 'fall'),
+  )
+}
+
+/** Versions that move what is judged; answers in words carry theirs themselves. */
+export function unsettled({ conflicts }: Setting, concerns: (one: Conflict) => boolean): Conflict[] {
+  return conflicts.filter(
+    (one) => concerns(one) && !idle.has(one.field) && !one.field.startsWith('photo') && !one.field.startsWith('word/'),
+  )
+}
+
+function idsOf({ id, readings }: { id: string; readings: Readonly<Record<string, readonly Reading[]>> }): string[] {
+  return [id, ...Object.values(readings).flatMap((all) => all.map((one) => one.id))]
 }
 
 function isHearsay(answer: Answer): boolean {
@@ -199,7 +247,7 @@ function heard(answer: Answer): string {
   return answer.how === 'told' ? 'told' : 'judged by eye'
 }
 
-function differs(answer: Answer): boolean {
+export function differs(answer: Answer): boolean {
   return (answer.rivals ?? []).some((one) => one.says !== answer.says)
 }
 

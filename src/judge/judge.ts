@@ -1,4 +1,5 @@
 import type { Planner } from '../leash/answer.ts'
+import { root } from '../record/placement.ts'
 import type { Survey } from '../record/survey.ts'
 import { defaultTeamCard, type TeamCard } from '../record/team-card.ts'
 import type { PackId } from '../standards/pack.ts'
@@ -54,10 +55,15 @@ export function settingOf(survey: Survey, options: Omit<JudgeOptions, 'walk' | '
   const on = view.demo === true && view.asOn ? view.asOn : options.on
   if (on === undefined)
     throw new Error('judge/no-day: a survey that is no demo is judged for a day that the caller gives')
+  // What the caller gives leaves nothing open in the survey's own.
+  const given = new Set<string>()
+  if (options.team) given.add('team')
+  if (options.code) given.add('code')
+  if (options.hour) given.add('hours')
   const hours: Hours | null = options.hour ? { from: options.hour, to: options.hour } : (view.hours ?? null)
   return {
     view,
-    conflicts: survey.conflicts ?? [],
+    conflicts: (survey.conflicts ?? []).filter((one) => one.entity !== root || !given.has(one.field)),
     team: teamOf(options.team ?? view.team ?? defaultTeamCard),
     pack: pack(options.code ?? view.code),
     on,

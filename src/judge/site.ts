@@ -3,7 +3,7 @@ import type { Interval } from '../record/interval.ts'
 import type { Feature, LedBy, Segment, Walk, Zone } from '../record/survey.ts'
 import { type HelpState, helpState } from './help.ts'
 import { read, type Setting } from './setting.ts'
-import { reaction, type Surroundings, surroundingsOf } from './surroundings.ts'
+import { reaction, type Surroundings, surroundingsOf, withNoiseOf } from './surroundings.ts'
 
 /** A segment where it lies: all that its checks look at. */
 export interface Site {
@@ -40,20 +40,29 @@ export interface Slope {
   from: Interval[]
 }
 
-const nobody: Surroundings = { crowd: null, twoWay: true, noise: null, noiseReadings: [], unseen: false, hours: [] }
+const nobody: Surroundings = {
+  crowd: null,
+  twoWay: true,
+  noise: null,
+  noiseReadings: [],
+  unseen: false,
+  hours: [],
+  seen: [],
+}
 
 export function siteOf(setting: Setting, walk: Walk, index: number, wet: boolean): Site {
   const segment = walk.segments[index]
   if (!segment) throw new Error(`judge/no-segment: ${walk.id} has no part ${index}`)
   const zone = setting.view.zones.find((one) => one.id === segment.zone) ?? null
-  const around = zone ? surroundingsOf(setting, zone) : nobody
+  const around = withNoiseOf(setting, zone ? surroundingsOf(setting, zone) : nobody, segment)
   const patch = segment.features.some((one) => one.kind === 'wet-patch' || one.kind === 'loose-ground')
   const wetApplies =
     patch ||
     segment.words.wetness?.says === 'wet' ||
-    zone?.outdoors === true ||
-    zone?.nearOutsideDoor === true ||
-    zone?.words.mopped?.says === 'yes'
+    // What nobody said of the zone is reckoned wet.
+    zone?.outdoors !== false ||
+    zone?.nearOutsideDoor !== false ||
+    zone?.words.mopped?.says !== 'no'
   return {
     setting,
     walk,

@@ -1,4 +1,4 @@
-import type { Observation, Zone } from '../record/survey.ts'
+import type { Observation, Segment, Zone } from '../record/survey.ts'
 import { type Hours, read, type Setting } from './setting.ts'
 
 /** What surrounds a segment at the hours judged: the worst of what was observed in them. */
@@ -13,12 +13,16 @@ export interface Surroundings {
   unseen: boolean
   /** The hours the answers hold for. */
   hours: Hours[]
+  /** What was observed in them. */
+  seen: readonly Observation[]
 }
 
 const crowds: Readonly<Record<string, 0 | 1 | 2 | 3>> = { empty: 0, few: 1, 'a few': 1, 'a-few': 1, busy: 2, packed: 3 }
 /** Upper ends of the bands that the words stand for; a word this table does not know is the loudest. */
 const noises: Readonly<Record<string, number>> = { quiet: 55, moderate: 65, lively: 65, loud: 73 }
 const loudest = 85
+/** A noise that masks, where nobody measured it. */
+const masking = 73
 
 export function surroundingsOf(setting: Setting, zone: Zone | null): Surroundings {
   const wanted = setting.hours
@@ -42,6 +46,19 @@ export function surroundingsOf(setting: Setting, zone: Zone | null): Surrounding
     twoWay: heard.some((one) => one.words.flow?.says !== 'one-way'),
     unseen: wanted !== null && heard.length > 0 && !covers(heard, wanted),
     hours: wanted ? [wanted] : heard.map(({ from, to }) => ({ from, to })),
+    seen: heard,
+  }
+}
+
+/** The same with what makes noise on the stretch itself: by its meter; unmeasured it masks, as its name says. */
+export function withNoiseOf(setting: Setting, around: Surroundings, { features }: Segment): Surroundings {
+  const sources = features.filter((one) => one.kind === 'noise-source')
+  if (sources.length === 0 || around.noise === null) return around
+  const levels = sources.map((one) => read(setting, one, 'level', 'high'))
+  return {
+    ...around,
+    noise: Math.max(around.noise, ...levels.map((one) => one?.high ?? masking)),
+    noiseReadings: [...around.noiseReadings, ...levels.flatMap((one) => one?.ids ?? [])],
   }
 }
 
@@ -53,6 +70,8 @@ function overlaps(one: Observation, hours: Hours): boolean {
 }
 
 function covers(heard: readonly Observation[], hours: Hours): boolean {
+  // Hours over midnight are nobody's single day.
+  if (hours.from > hours.to) return false
   let reached = hours.from
   for (const one of [...heard].sort((a, b) => (a.from < b.from ? -1 : 1))) {
     if (one.from > reached) return false

@@ -1,4 +1,5 @@
 import type { Walk } from '../record/survey.ts'
+import { differs, unsettled } from './answered.ts'
 import { battery } from './checks/battery.ts'
 import { emergency } from './checks/emergency.ts'
 import { decideAt } from './decide-at.ts'
@@ -103,6 +104,7 @@ function walkResult(
   const gaps: Gap[] = [
     ...(out ? [] : [unanswered(walk, 'a way out that needs neither robot nor lift')]),
     ...whysOf(own),
+    ...open(setting, walk),
   ]
   if (segments.length === 0) gaps.push(unanswered(walk, 'its parts'))
   const ownVerdict = own.some((one) => one.state === 'fails')
@@ -211,6 +213,19 @@ function allowedOn(walk: Walk, judged: readonly Judged[]): Finding[] {
         }),
       ]
     : []
+}
+
+/** Versions of the walk's own answers that nobody has settled. Where it starts and heads moves nothing. */
+function open(setting: Setting, walk: Walk): Gap[] {
+  const versions = unsettled(setting, (one) => one.entity === walk.id && ['alarm', 'in', 'gone'].includes(one.field))
+  const rivals = walk.words.wayOut && differs(walk.words.wayOut) ? ['the way out'] : []
+  return [...versions.map((one) => one.field), ...rivals].map((what) => ({
+    kind: 'differs',
+    text: `${walk.name}: two versions of ${what}.`,
+    readings: [],
+    harm: 'trap',
+    blocks: true,
+  }))
 }
 
 function unanswered(walk: Walk, what: string): Gap {

@@ -62,9 +62,9 @@ function letGo(site: Site): Finding[] {
   ]
 }
 
-/** Outdoors and wet, a robot without a rain rating fails. */
-function rain({ setting, segment, outdoors, wet }: Site): Finding[] {
-  if (!outdoors || !wet || setting.team.card.robot.rainRating?.trim()) return []
+/** Outdoors and wet, a robot without a rain rating fails; where nobody said that a zone is indoors it may rain. */
+function rain({ setting, segment, zone, wet }: Site): Finding[] {
+  if (zone?.outdoors === false || !wet || setting.team.card.robot.rainRating?.trim()) return []
   return [
     one({
       feature: segment.id,
