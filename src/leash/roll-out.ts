@@ -43,11 +43,23 @@ export function costToGo(
     if (goal[at]) cost[s] = 0
     else if (paused && !banned?.[at]) cost[s] = Math.min(unreachable, (paused[at] as number) + pauseCost)
   }
+  const changed = new Int32Array(directions).fill(1)
+  const visited = new Int32Array(directions)
+  let clock = 1
   for (let pass = 0; pass < most; pass++) {
     let lowered = false
     for (let i = 0; i < 2 * directions; i++) {
       const k = i < directions ? directions - 1 - i : i - directions
-      lowered = lowerDirection(field, value, cost, level, k) || lowered
+      const news = Math.max(
+        changed[k] as number,
+        changed[(k + 1) % directions] as number,
+        changed[(k + directions - 1) % directions] as number,
+      )
+      if (news <= (visited[k] as number)) continue
+      visited[k] = ++clock
+      if (!lowerDirection(field, value, cost, level, k)) continue
+      changed[k] = ++clock
+      lowered = true
     }
     if (!lowered) break
   }
@@ -124,7 +136,7 @@ function lowerDirection(field: Field, value: Float32Array, cost: Float32Array, l
       best = Math.min(best, mix(one, other, weight) + step)
     }
     if (held < level) best += dipCost * (level - held)
-    if (best < (cost[s] as number) - 1e-5) {
+    if (best < (cost[s] as number) - 1e-3) {
       cost[s] = best
       lowered = true
     }

@@ -52,7 +52,7 @@ export function better(one: Found | null, other: Found | null): Found | null {
 }
 
 /** Polishes nodes in rounds, each with shorter steps, until a round gains nothing; the best proved of all rounds. */
-export function polishAndProve(quest: Quest, rough: readonly Node[], rounds = 3): Found | null {
+export function polishAndProve(quest: Quest, rough: readonly Node[], rounds = 4): Found | null {
   const terms: PoseTerms = { walls: quest.walls, bodies: quest.bodies, phi: quest.phi, drift: quest.drift }
   const reach = reachOf(quest.bodies)
   let nodes = refine(rough, 0.07, reach)

@@ -51,7 +51,8 @@ export function searchSlack(quest: Quest, taut: Found | null, enough: Metres, pa
     found.push(before)
     const value = values[n] as number
     if (worth(n) >= enough - 0.003 || value + shortfall(quest.separation) < 0) continue
-    if (n > 1 && value < (values[n - 1] as number) + 0.003 && worth(n) >= (values[n - 1] as number)) continue
+    // What a pause gains on the grid it gains in truth, near enough: without gain there is nothing to look for.
+    if (value < (values[n - 1] as number) + 0.003 && worth(n) >= (values[n - 1] as number)) continue
     if (!cut || Math.abs(cut.tau - value) > 0.01) {
       const tau = Math.max(0, value - 0.006)
       const again = tau > 0.02 ? settledField(quest, tau, value - depth, passes) : base
