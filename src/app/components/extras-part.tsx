@@ -23,13 +23,11 @@ export function ExtrasPart() {
         {words(state)}
       </p>
       {state.kind === 'coming' && <TapeProgress share={state.share} label="Getting the offline extras" />}
-      <div class="keys">
-        {(state.kind === 'absent' || state.kind === 'failed') && (
-          <BigKey press={() => void takeExtras()}>Offline extras: {megabytes}</BigKey>
-        )}
-        {state.kind === 'coming' && <BigKey press={stopExtras}>Stop</BigKey>}
-        {state.kind === 'here' && <BigKey press={() => void removeExtras()}>Remove the extras</BigKey>}
-      </div>
+      {state.kind !== 'looking' && (
+        <div class="keys">
+          <BigKey press={() => void keys[state.kind].press()}>{keys[state.kind].label}</BigKey>
+        </div>
+      )}
       <p class="soft">
         The letters for PDF files and the tables for braille. Kept on this phone, they need no network afterwards.
         {state.kind === 'here' && (
@@ -48,6 +46,15 @@ export function ExtrasPart() {
 }
 
 const megabytes = `${(extrasBytes / 1e6).toFixed(1)} MB`
+
+/** One key in one place: whoever stands on it keeps their place when its work changes. */
+const take = { label: `Offline extras: ${megabytes}`, press: takeExtras }
+const keys = {
+  absent: take,
+  failed: take,
+  coming: { label: 'Stop', press: stopExtras },
+  here: { label: 'Remove the extras', press: removeExtras },
+}
 
 function Licence(props: { path: string; children: string }) {
   // A page of its own: it is not one of the app's.

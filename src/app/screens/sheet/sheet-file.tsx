@@ -2,7 +2,7 @@ import { useEffect, useState } from 'preact/hooks'
 import type { Outline } from '../../../sheets/content/tree.ts'
 import { type SheetAnswer, writeSheet } from '../../../workers/bridge.ts'
 import { BigKey } from '../../components/big-key.tsx'
-import { extras, extrasFolder } from '../../state/extras.ts'
+import { extrasFolder } from '../../state/extras.ts'
 import { fileName } from '../../state/hand-over.ts'
 import type { FileForm } from './forms.ts'
 import { HandOverKeys } from './hand-over-keys.tsx'
@@ -16,15 +16,13 @@ interface Shown {
   stage: string
 }
 
-/** A form that another app opens: written off the page, then saved or shared. Says what is in the way. */
+/** A form that another app opens: written off the page, then saved or shared. What is in the way is said. */
 export function SheetFile(props: { outline: Outline; form: FileForm; name: string; say(text: string): void }) {
   const { outline, form, say } = props
   const [shown, setShown] = useState<Shown | null>(null)
   const [attempt, setAttempt] = useState(0)
-  const waits = form.needsExtras && extras.value.kind !== 'here'
 
   useEffect(() => {
-    if (waits) return
     let wanted = true
     const show = (answer: SheetAnswer | null, stage: string) => wanted && setShown({ outline, form, answer, stage })
     show(null, 'Waiting')
@@ -36,15 +34,8 @@ export function SheetFile(props: { outline: Outline; form: FileForm; name: strin
       wanted = false
       writing.cancel()
     }
-  }, [outline, form, waits, attempt])
+  }, [outline, form, attempt])
 
-  if (waits)
-    return (
-      <p role="status">
-        {form.label} needs the offline extras, and they are not on this phone. Get them under “Offline extras” on this
-        page, once, with a network.
-      </p>
-    )
   const now = shown?.outline === outline && shown.form === form ? shown : null
   if (!now?.answer) return <p role="status">{now?.stage ?? 'Waiting'}</p>
   const { answer } = now
