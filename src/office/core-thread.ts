@@ -16,6 +16,7 @@ export function startCore(file: URL): Core {
   const waiting = new Map<number, { resolve(answer: unknown): void; reject(error: Error): void }>()
   let thread: Worker | null = null
   let last = 0
+  let closed = false
   const start = () => {
     const fresh = new Worker(file)
     // It keeps nothing running by itself.
@@ -37,6 +38,7 @@ export function startCore(file: URL): Core {
   }
   const ask = (question: Question) =>
     new Promise<unknown>((resolve, reject) => {
+      if (closed) return reject(new Error('office/core-ended: the office is stopping'))
       thread ??= start()
       const id = ++last
       waiting.set(id, { resolve, reject })
@@ -46,6 +48,7 @@ export function startCore(file: URL): Core {
     judge: (...given) => ask({ judge: given }) as ReturnType<Judge>,
     makeSheet: (...given) => ask({ sheet: given }) as ReturnType<SheetMaker>,
     close: async () => {
+      closed = true
       await thread?.terminate()
     },
   }

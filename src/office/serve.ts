@@ -45,8 +45,10 @@ export async function serve(settings: Settings, program: { file: URL; dist: stri
     stopping = true
     app.log.info({ signal }, 'stopping')
     await app.close()
-    await worker.stop()
+    const idle = worker.stop()
+    // A judgement under way may have minutes to go: it is broken off, and begun again after the next start.
     await core.close()
+    await idle
     await close()
     process.exitCode = 0
   }

@@ -1,9 +1,8 @@
 import { foldSurvey } from '../record/fold.ts'
-import type { TeamCard } from '../record/team-card.ts'
-import { defaultTeamCard } from '../record/team-card.ts'
+import { defaultTeamCard, type TeamCard } from '../record/team-card.ts'
 import { dayOf, type Judge, type Office } from './office.ts'
 import { logOf } from './repositories/facts.ts'
-import { finish, type Leased, lease } from './repositories/jobs.ts'
+import { finish, type Leased, lease, leaseHolds, renew } from './repositories/jobs.ts'
 import { tryTeam } from './team-trial.ts'
 
 export interface Worker {
@@ -55,13 +54,28 @@ export async function workOnce(office: Office): Promise<boolean> {
 
 async function workOn(office: Office, judge: Judge, item: Leased): Promise<void> {
   const { db } = office
+  // A large venue may take longer than a lease: it is renewed while the work goes on.
+  const renewing = setInterval(
+    () => void renew(db, item, office.process, office.now()).catch(() => undefined),
+    renewEvery,
+  )
   try {
     const survey = foldSurvey(await logOf(db, item.survey))
     const { team } = item.detail as { team: TeamCard }
     await finish(db, item, office.process, 'done', await tryTeam(judge, survey, team, dayOf(office.now())))
   } catch (error) {
+    if (isEnding(error)) return
     await finish(db, item, office.process, 'failed', { why: error instanceof Error ? error.message : String(error) })
+  } finally {
+    clearInterval(renewing)
   }
+}
+
+const renewEvery = leaseHolds / 5
+
+/** The judge was stopped with the office: nothing is said of the venue, and it is taken up again after the next start. */
+function isEnding(error: unknown): boolean {
+  return error instanceof Error && error.message.startsWith('office/core-ended')
 }
 
 /** From best to worst, for the one word that a line of the list has room for. */
@@ -80,7 +94,12 @@ async function freshen(office: Office, judge: Judge): Promise<boolean> {
     .executeTakeFirst()
   if (!row) return false
   const survey = foldSurvey(await logOf(db, row.survey))
-  const judged = await judge(survey, survey.view.team ?? defaultTeamCard, dayOf(office.now())).catch(() => null)
+  const judged = await judge(survey, survey.view.team ?? defaultTeamCard, dayOf(office.now())).catch(
+    (error: unknown) => {
+      if (isEnding(error)) throw error
+      return null
+    },
+  )
   const worst = judged?.walks.map((walk) => order.indexOf(walk.verdict)).sort((a, b) => b - a)[0]
   await db
     .updateTable('surveys')

@@ -113,6 +113,18 @@ describe.each(engines)('a new team card tried on every venue on %s', (engine) =>
     })
   })
 
+  test('a judge stopped with the office says nothing of the venue: it stays to be done', async () => {
+    const { job } = await begin()
+    const ending: Judge = async () => {
+      throw new Error('office/core-ended: the office is stopping')
+    }
+    await workOnce({ ...under.office, judge: ending })
+    expect(await progress(job)).toMatchObject({ done: 0, failed: 0, waiting: 4 })
+    under.clock.now += leaseHolds
+    while (await workOnce(under.office));
+    expect(await progress(job)).toMatchObject({ done: 4, failed: 0 })
+  })
+
   test('a card that cannot be read begins nothing', async () => {
     const { status, body } = await under.ask(rita, 'POST', '/api/jobs/team-trial', { team: { kind: 'other' } })
     expect(status).toBe(422)

@@ -65,12 +65,14 @@ export interface Wishes {
   makeSheet?: Office['makeSheet']
   requestsAMinute?: number
   dist?: string
+  /** An office that is there already: a second process on its database. */
+  beside?: OfficeUnderTest
   more?: (app: FastifyInstance) => void
 }
 
 /** A whole office in this process, on the engine, its clock at noon of a fixed day. */
 export async function startOffice(engine: Engine, wishes: Wishes = {}): Promise<OfficeUnderTest> {
-  const { folder, url } = await freshPlace(engine)
+  const { folder, url } = wishes.beside ?? (await freshPlace(engine))
   const opened = await openDatabase({ folder, url })
   const clock = { now: Date.parse('2026-05-04T12:00:00Z') }
   const office: Office = {
@@ -94,7 +96,7 @@ export async function startOffice(engine: Engine, wishes: Wishes = {}): Promise<
     },
     wishes.more,
   )
-  const branch = await addBranch(office.db, 'North', clock.now)
+  const branch = wishes.beside?.branch ?? (await addBranch(office.db, 'North', clock.now))
   let asked = 0
   const ask: OfficeUnderTest['ask'] = async (who, method, path, body, from) => {
     asked++
@@ -134,7 +136,7 @@ export async function startOffice(engine: Engine, wishes: Wishes = {}): Promise<
     async close() {
       await app.close()
       await opened.close()
-      rmSync(folder, { recursive: true, force: true })
+      if (!wishes.beside) rmSync(folder, { recursive: true, force: true })
     },
   }
 }

@@ -4,7 +4,7 @@ import { newId } from '../secrets.ts'
 import type { Tables } from '../sql/tables.ts'
 import { transact } from '../sql/transact.ts'
 
-/** How long a worker may keep an item before another takes it over: longer than the slowest venue takes. */
+/** How long a worker that says nothing more keeps an item before another takes it over. */
 export const leaseHolds = 5 * 60 * 1000
 
 /** A job over every survey of the branch that is here now. */
@@ -87,6 +87,18 @@ export async function lease(db: Kysely<Tables>, owner: string, now: number): Pro
       .executeTakeFirstOrThrow()
     return { ...next, kind: job.kind, detail: JSON.parse(job.detail) as unknown }
   }
+}
+
+/** Keeps an item that is being worked on from being taken over. */
+export async function renew(db: Kysely<Tables>, { job, survey }: Leased, owner: string, now: number): Promise<void> {
+  await db
+    .updateTable('job_items')
+    .set({ lease_until: now + leaseHolds })
+    .where('job', '=', job)
+    .where('survey', '=', survey)
+    .where('state', '=', 'waiting')
+    .where('lease_owner', '=', owner)
+    .execute()
 }
 
 /** Ends an item with its result; false where the lease has gone to another worker meanwhile: then theirs counts. */
