@@ -1,6 +1,11 @@
 import type { Metres } from '../units/quantity.ts'
 import type { Boundary } from './boundary.ts'
 
+/** Length of a vector; Math.hypot guards against overflow that no venue has, at ten times the cost. */
+export function lengthOf(dx: number, dy: number): number {
+  return Math.sqrt(dx * dx + dy * dy)
+}
+
 /** Distance from point (px, py) to the segment from (x0, y0) to (x1, y1); a segment without length is a point. */
 export function pointToSegment(px: number, py: number, x0: number, y0: number, x1: number, y1: number): Metres {
   const dx = x1 - x0
@@ -8,7 +13,7 @@ export function pointToSegment(px: number, py: number, x0: number, y0: number, x
   const square = dx * dx + dy * dy
   let t = square > 0 ? ((px - x0) * dx + (py - y0) * dy) / square : 0
   t = t < 0 ? 0 : t > 1 ? 1 : t
-  return Math.hypot(px - x0 - t * dx, py - y0 - t * dy)
+  return lengthOf(px - x0 - t * dx, py - y0 - t * dy)
 }
 
 /**

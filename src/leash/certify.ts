@@ -2,7 +2,7 @@ import { type Boundary, distanceToBoundary } from '../geometry/boundary.ts'
 import { holds } from '../geometry/polygon-check.ts'
 import { pointToRectangle, rectangleClearance } from '../geometry/rectangle.ts'
 import type { Scene } from '../geometry/scene.ts'
-import { pointToSegment, segmentToBoundary } from '../geometry/segment.ts'
+import { lengthOf, pointToSegment, segmentToBoundary } from '../geometry/segment.ts'
 import { discSweepClearance, rectangleSweepClearance } from '../geometry/sweep.ts'
 import type { Metres, Radians } from '../units/quantity.ts'
 import type { Bodies, Motion } from './answer.ts'
@@ -67,7 +67,7 @@ function brokenEnds(scene: Scene, separation: Metres, nodes: readonly Node[]): s
   for (const node of nodes)
     if (!Number.isFinite(node.x + node.y + node.psi + node.length + node.heading)) return 'a sample that is no number'
   const { x, y, heading } = scene.start
-  if (Math.hypot(first.x - x, first.y - y) > exact) return 'it does not start where it should'
+  if (lengthOf(first.x - x, first.y - y) > exact) return 'it does not start where it should'
   if (first.slack || Math.abs(first.length - separation) > exact || Math.abs(wrap(first.psi - heading)) > exact)
     return 'it does not start with a taut leash along the entry'
   if (Math.abs(wrap(first.heading - heading)) > exact) return 'the robot does not start heading along the entry'
@@ -84,7 +84,7 @@ function brokenStep(bodies: Bodies, separation: Metres, nodes: readonly Node[]):
     if (!to.slack && Math.abs(wrap(to.heading - to.psi)) > bodies.phiMax + 1e-9) return 'the leash pulls from the side'
     const dx = to.x - from.x
     const dy = to.y - from.y
-    const moved = Math.hypot(dx, dy)
+    const moved = lengthOf(dx, dy)
     if (from.slack || to.slack) {
       if (moved > exact * 1e-3) return 'the handler walks on a slack leash'
     } else {
@@ -116,7 +116,7 @@ function countPauses(nodes: readonly Node[]): { count: number; broken: string | 
       if (walked < 0.2) return { count, broken: 'two pauses follow without walking between' }
       walked = 0
     }
-    walked += Math.hypot(to.x - from.x, to.y - from.y)
+    walked += lengthOf(to.x - from.x, to.y - from.y)
   }
   return { count, broken: count > 3 ? 'more than three pauses' : null }
 }
@@ -280,7 +280,7 @@ function handlerBetween(
 ): Metres {
   const turn = Math.abs(to.psi - from.psi)
   if (from.slack || to.slack) return (a.handler + b.handler - drift * turn) / 2
-  const pull = Math.hypot(to.x - from.x, to.y - from.y)
+  const pull = lengthOf(to.x - from.x, to.y - from.y)
   const bound = (a.handler + b.handler - pull * (1 + turn * turn)) / 2
   if (pull === 0) return Math.min(a.handler, b.handler)
   if (bound >= target || Math.min(a.handler, b.handler) <= -bodies.r) return bound

@@ -5,6 +5,7 @@ import type { Metres } from '../units/quantity.ts'
 import type { Bodies, ClearanceAnswer, ClearanceOptions, Planner } from './answer.ts'
 import { apart } from './certify.ts'
 import { freeBound } from './free-bound.ts'
+import { isCentred, straightNodes } from './opening.ts'
 import {
   better,
   type Found,
@@ -21,6 +22,8 @@ import { checkQuestion } from './team.ts'
 import { tightestOf } from './tightest.ts'
 import { closedTurn, closedTurnNodes, hasClosedTurn } from './turn.ts'
 
+/** A motion this near to what the closed form allows is not searched for further, metres. */
+const closeEnough = 0.02
 /** What the closed form was seen to differ from an independent slow solver, at most, metres. */
 const closedMargin = 0.003
 
@@ -56,8 +59,12 @@ export const clearance: Planner = (scene, bodies, separation, options = {}) => {
     const found = nodes && prove(quest, nodes)
     if (found && found.certificate.clearance >= high - 2 * closedMargin) return answer(quest, found, high, options)
     const polished = nodes && better(found, polishAndProve(quest, nodes))
-    if (polished && polished.certificate.clearance >= high - 3 * closedMargin)
-      return answer(quest, polished, high, options)
+    if (polished && polished.certificate.clearance >= high - closeEnough) return answer(quest, polished, high, options)
+  }
+  // Straight ahead: any robot can, and none can do better than the free bound.
+  if (form?.kind === 'indoor' && isCentred(form)) {
+    const found = prove(quest, straightNodes(scene, form, separation))
+    if (found && found.certificate.clearance >= free - closedMargin) return answer(quest, found, free, options)
   }
   if (!bodies.sideways) return nothing(high, false)
   const taut = searchTaut(quest, passes)
@@ -72,7 +79,7 @@ export const clearance: Planner = (scene, bodies, separation, options = {}) => {
   const closed = form?.kind === 'turn' && hasClosedTurn(form, bodies)
   if (closed && taut.found && taut.found.certificate.clearance >= 0)
     return { ...answer(quest, taut.found, high, options), decided: taut.settled }
-  const slack = searchSlack(quest, taut.found, free, passes)
+  const slack = searchSlack(quest, taut, free, passes)
   return slackAnswer(quest, slack, high, free, taut.settled, options)
 }
 

@@ -1,4 +1,5 @@
 import type { Boundary } from '../geometry/boundary.ts'
+import { lengthOf } from '../geometry/segment.ts'
 import type { Metres, Radians } from '../units/quantity.ts'
 import type { Bodies } from './answer.ts'
 
@@ -70,7 +71,7 @@ export function gather(
   const cyPsi = length * cu
   const cxTheta = -bodies.d * st
   const cyTheta = bodies.d * ct
-  const reach = Math.hypot(half, side)
+  const reach = lengthOf(half, side)
   for (let i = 0; i < walls.count; i++) {
     const x0 = walls.x0[i] as number
     const y0 = walls.y0[i] as number
@@ -150,7 +151,7 @@ function cornerMargins(
   const along = dx * (walls.tx[i] as number) + dy * (walls.ty[i] as number)
   const alongBefore = dx * (walls.tx[before] as number) + dy * (walls.ty[before] as number)
   if (along <= 0 && alongBefore >= 0) {
-    const distance = Math.hypot(dx, dy)
+    const distance = lengthOf(dx, dy)
     if (distance - bodies.r < above && distance > 1e-9)
       add(out, distance - bodies.r, dx / distance, dy / distance, 0, 0, 1)
   }
@@ -159,11 +160,14 @@ function cornerMargins(
   if (slack && terms.drift > 0) {
     const ex = dx + terms.drift * cu
     const ey = dy + terms.drift * su
-    const distance = Math.hypot(ex, ey)
+    const distance = lengthOf(ex, ey)
     if (distance - bodies.r < above && distance > 1e-9)
       add(out, distance - bodies.r, ex / distance, ey / distance, (terms.drift * (ey * cu - ex * su)) / distance, 0, 1)
   }
+  leashMargin(out, terms, i, hx, hy, cu, su, length)
   // Robot's sides against the corner, in the robot's own axes.
+  const far = (bodies.a + bodies.b) / 2 + above
+  if (far < 0 || (vx - cx) * (vx - cx) + (vy - cy) * (vy - cy) > far * far) return
   const qx = (vx - cx) * ct + (vy - cy) * st
   const qy = (vy - cy) * ct - (vx - cx) * st
   const outX = Math.abs(qx) - bodies.a / 2
@@ -172,7 +176,7 @@ function cornerMargins(
   let gx = 0
   let gy = 0
   if (outX > 0 && outY > 0) {
-    distance = Math.hypot(outX, outY)
+    distance = lengthOf(outX, outY)
     gx = (Math.sign(qx) * outX) / distance
     gy = (Math.sign(qy) * outY) / distance
   } else if (outX > outY) {
@@ -254,7 +258,7 @@ function addApart(
     const qy = -(ay * c2 - ax * s2)
     const outX = Math.max(0, Math.abs(qx) - bodies.a / 2)
     const outY = Math.max(0, Math.abs(qy) - bodies.b / 2)
-    return Math.hypot(outX, outY) - bodies.r - bodies.g - 1e-3
+    return lengthOf(outX, outY) - bodies.r - bodies.g - 1e-3
   }
   const here = at(cu, su, ct, st)
   if (here > 0.1 || Number.isNaN(hx + hy)) return

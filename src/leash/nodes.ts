@@ -1,3 +1,4 @@
+import { lengthOf } from '../geometry/segment.ts'
 import type { Metres, Radians } from '../units/quantity.ts'
 import type { Motion } from './answer.ts'
 
@@ -41,7 +42,7 @@ export function arcFrom(from: Node, pull: Metres, turn: Radians, heading: Radian
 /** The pose at fraction `t` of the way between two nodes. */
 export function between(from: Node, to: Node, t: number): Node {
   const turn = to.psi - from.psi
-  const chord = Math.hypot(to.x - from.x, to.y - from.y)
+  const chord = lengthOf(to.x - from.x, to.y - from.y)
   const pull = chord > 0 ? chord / sinc(turn / 2) : 0
   const next = arcFrom(from, pull * t, turn * t, from.heading + (to.heading - from.heading) * t)
   next.length = from.length + (to.length - from.length) * t
@@ -52,7 +53,7 @@ export function between(from: Node, to: Node, t: number): Node {
 /** Upper bound of how far any point of either body moves between two nodes; `reach` is the robot's farthest point from the attachment. */
 export function greatestMove(from: Node, to: Node, reach: Metres): Metres {
   const turn = Math.abs(to.psi - from.psi)
-  const pull = Math.hypot(to.x - from.x, to.y - from.y) / Math.max(sinc(turn / 2), 1e-9)
+  const pull = lengthOf(to.x - from.x, to.y - from.y) / Math.max(sinc(turn / 2), 1e-9)
   return (
     pull +
     turn * Math.max(from.length, to.length) +
@@ -122,7 +123,7 @@ export function nodesOf(motion: Motion): Node[] {
       x: s[i + 3] as number,
       y: s[i + 4] as number,
       psi,
-      length: Math.hypot(dx, dy),
+      length: lengthOf(dx, dy),
       heading: s[i + 2] as number,
       slack: s[i + 5] === 1,
     })

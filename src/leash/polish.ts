@@ -1,5 +1,6 @@
 import { signedArea } from '../geometry/boundary.ts'
 import type { Scene } from '../geometry/scene.ts'
+import { lengthOf } from '../geometry/segment.ts'
 import type { Metres } from '../units/quantity.ts'
 import { add, gather, type Margins, makeMargins, type PoseTerms } from './margins.ts'
 import { type Node, sinc } from './nodes.ts'
@@ -35,7 +36,24 @@ interface Track {
   pull: Float64Array
   length: Float64Array
   slack: Uint8Array
+  /** What is known of far nodes, shared by a track and its trials. */
+  calm: Calm
 }
+
+/**
+ * Most nodes are far from anything: the least margins a node once had, where it had them. Until it has moved so far
+ * that they may have been used up, it need not be looked at again.
+ */
+interface Calm {
+  x: Float64Array
+  clearance: Float64Array
+  constraint: Float64Array
+}
+
+/** Margins are asked for this much further than needed, so that a node stays calm for a while, metres. */
+const lookahead = 0.06
+/** A constraint met by more than this weighs nothing at any sharpness, metres. */
+const wellMet = 0.06
 
 export function polish(scene: Scene, terms: PoseTerms, nodes: readonly Node[], stages = usualStages): Node[] {
   const track = trackOf(nodes)
@@ -93,6 +111,11 @@ function trackOf(nodes: readonly Node[]): Track {
     pull: new Float64Array(size),
     length: Float64Array.from(nodes, (node) => node.length),
     slack: Uint8Array.from(nodes, (node) => (node.slack ? 1 : 0)),
+    calm: {
+      x: new Float64Array(size * 4),
+      clearance: new Float64Array(size).fill(Number.NEGATIVE_INFINITY),
+      constraint: new Float64Array(size),
+    },
   }
   for (let k = 0; k < size; k++) {
     const node = nodes[k] as Node
@@ -102,7 +125,7 @@ function trackOf(nodes: readonly Node[]): Track {
     const turn = next.psi - node.psi
     track.u[k * 3 + 1] = turn
     track.u[k * 3 + 2] = next.heading - node.heading
-    const chord = Math.hypot(next.x - node.x, next.y - node.y)
+    const chord = lengthOf(next.x - node.x, next.y - node.y)
     track.pull[k] = chord < 1e-9 ? 0 : chord / sinc(turn / 2)
   }
   return track
@@ -120,26 +143,47 @@ function goalEdges(scene: Scene): GoalEdge[] {
   const ring = signedArea(scene.goal.polygon) > 0 ? scene.goal.polygon : [...scene.goal.polygon].reverse()
   return ring.map((from, i) => {
     const to = ring[(i + 1) % ring.length] as typeof from
-    const length = Math.hypot(to.x - from.x, to.y - from.y)
+    const length = lengthOf(to.x - from.x, to.y - from.y)
     return { x: from.x, y: from.y, nx: -(to.y - from.y) / length, ny: (to.x - from.x) / length }
   })
 }
 
 function gatherAt(terms: PoseTerms, goal: GoalEdge[], out: Margins, track: Track, k: number, above: Metres): void {
-  const hx = track.x[k * 4] as number
-  const hy = track.x[k * 4 + 1] as number
-  gather(
-    out,
-    terms,
-    hx,
-    hy,
-    track.x[k * 4 + 2] as number,
-    track.length[k] as number,
-    track.x[k * 4 + 3] as number,
-    track.slack[k] === 1,
-    above,
-  )
-  if (k === track.size - 1)
+  const at = k * 4
+  const hx = track.x[at] as number
+  const hy = track.x[at + 1] as number
+  const psi = track.x[at + 2] as number
+  const theta = track.x[at + 3] as number
+  const length = track.length[k] as number
+  const { calm } = track
+  const last = k === track.size - 1
+  if ((calm.clearance[k] as number) > above && (calm.constraint[k] as number) > wellMet && !last) {
+    const moved =
+      Math.abs(hx - (calm.x[at] as number)) +
+      Math.abs(hy - (calm.x[at + 1] as number)) +
+      Math.abs(psi - (calm.x[at + 2] as number)) * Math.max(length, 0.3) +
+      Math.abs(theta - (calm.x[at + 3] as number)) * (terms.bodies.a + terms.bodies.d)
+    if ((calm.clearance[k] as number) - moved > above && (calm.constraint[k] as number) - moved > wellMet) {
+      out.count = 0
+      return
+    }
+  }
+  const wide = above + lookahead
+  gather(out, terms, hx, hy, psi, length, theta, track.slack[k] === 1, wide)
+  let clearance = wide
+  let constraint = 1
+  for (let i = 0; i < out.count; i++) {
+    const value = out.value[i] as number
+    if (out.clears[i]) clearance = Math.min(clearance, value)
+    else constraint = Math.min(constraint, value)
+  }
+  calm.clearance[k] = clearance
+  calm.constraint[k] = constraint
+  calm.x[at] = hx
+  calm.x[at + 1] = hy
+  calm.x[at + 2] = psi
+  calm.x[at + 3] = theta
+  if (last)
     for (const edge of goal) {
       const inside = (hx - edge.x) * edge.nx + (hy - edge.y) * edge.ny - 2e-3
       if (inside < 0.2) add(out, inside, edge.nx, edge.ny, 0, 0, 0)

@@ -74,6 +74,16 @@ export interface TautResult {
   value: Metres
   /** False where the cap on passes was reached. */
   settled: boolean
+  /** The field with headings cut at zero: a search with pauses begins with it as well. */
+  base: Settled
+}
+
+/** A field with its taut values and the value of the start. */
+export interface Settled {
+  field: Field
+  taut: Float32Array
+  value: Metres
+  settled: boolean
 }
 
 /** The taut search: value function, roll-out, polishing, proof. `passes` caps the work and is counted down. */
@@ -135,7 +145,8 @@ function followedAfresh(quest: Quest, nodes: readonly Node[]): Node[] {
 }
 
 function searchPlainly(quest: Quest, passes: Passes): TautResult {
-  let { field, taut, value, settled } = settledField(quest, 0, floor, passes)
+  const base = settledField(quest, 0, floor, passes)
+  let { field, taut, value, settled } = base
   // The runs of headings are right at the level they were cut at: cut them again just under the value found.
   if (value > 0.02) {
     const again = settledField(quest, value - 0.006, value - depth, passes)
@@ -155,7 +166,7 @@ function searchPlainly(quest: Quest, passes: Passes): TautResult {
       const rough = rolled && headed(quest, rolled.stretches[0] as Node[], level)
       if (rough) found = better(found, polishAndProve(quest, rough))
     }
-  return { found, value, settled }
+  return { found, value, settled, base }
 }
 
 /** How far below the value looked for a state is still told apart: a roll-out dips no deeper. Metres. */
@@ -167,7 +178,7 @@ export interface Passes {
 }
 
 /** A field with its taut values, runs of headings cut at `tau`, states from `least` up, and the value of the start. */
-export function settledField(quest: Quest, tau: Metres, least: Metres, passes: Passes) {
+export function settledField(quest: Quest, tau: Metres, least: Metres, passes: Passes): Settled {
   const window = Math.min(directions / 2, Math.floor((quest.phi / (2 * Math.PI)) * directions + 1e-9))
   const field = fieldOf(quest.scene, quest.tables, quest.separation, window, tau, least)
   const taut = goalValues(field)

@@ -15,14 +15,14 @@ import {
   settledField,
   shortfall,
   startValue,
+  type TautResult,
 } from './search.ts'
-import { floor } from './tables.ts'
 import { withPause } from './value.ts'
 
 /** At most so many pauses; more is no guiding. */
 export const mostPauses = 3
 /** How often a place for a pause is tried, found impossible and banned, before the level is given up. */
-const mostBans = 6
+const mostBans = 4
 
 export interface SlackResult {
   /** Best proved motion with at most n pauses, by n; index 0 is the taut one. */
@@ -36,11 +36,11 @@ export interface SlackResult {
  * Motions with one, two and three pauses. `enough` is what none can exceed: once it is reached nothing is left to
  * search for.
  */
-export function searchSlack(quest: Quest, taut: Found | null, enough: Metres, passes: Passes): SlackResult {
-  const found: (Found | null)[] = [taut]
+export function searchSlack(quest: Quest, taut: TautResult, enough: Metres, passes: Passes): SlackResult {
+  const found: (Found | null)[] = [taut.found]
   const worth = (n: number) => found[n]?.certificate.clearance ?? Number.NEGATIVE_INFINITY
   // A first look with headings cut at zero says how much each pause may gain at most.
-  const base = settledField(quest, 0, floor, passes)
+  const { base } = taut
   const none = new Uint8Array(base.field.count)
   const first = layersOf(quest, base.field, base.taut, mostPauses, none, passes)
   let settled = base.settled && first.settled
@@ -52,7 +52,7 @@ export function searchSlack(quest: Quest, taut: Found | null, enough: Metres, pa
     const value = values[n] as number
     if (worth(n) >= enough - 0.003 || value + shortfall(quest.separation) < 0) continue
     // What a pause gains on the grid it gains in truth, near enough: without gain there is nothing to look for.
-    if (value < (values[n - 1] as number) + 0.003 && worth(n) >= (values[n - 1] as number)) continue
+    if (value < (values[n - 1] as number) + (n === 1 ? 0.003 : 0.01) && worth(n) >= (values[n - 1] as number)) continue
     if (!cut || Math.abs(cut.tau - value) > 0.01) {
       const tau = Math.max(0, value - 0.006)
       const again = tau > 0.02 ? settledField(quest, tau, value - depth, passes) : base

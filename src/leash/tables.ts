@@ -7,6 +7,8 @@ import { type Grid, gridOf } from './grid.ts'
 
 /** Directions of leash and robot that the search tells apart. */
 export const directions = 72
+/** Robot clearances above this are not told apart, metres: no narrow place has more. */
+const roomy = 0.4
 /** Values below this are not told apart: a wall is a wall. Metres. */
 export const floor = -0.15
 
@@ -84,7 +86,7 @@ export function fillRobot(tables: Tables, node: number): void {
     const s = sines[k] as number
     robot[from + k] = Math.max(
       floor,
-      rectangleClearance(walls, x + bodies.d * c, y + bodies.d * s, c, s, half, side, 1),
+      rectangleClearance(walls, x + bodies.d * c, y + bodies.d * s, c, s, half, side, roomy),
     )
   }
 }
