@@ -101,7 +101,6 @@ const entries = [
   /^app\/vite\.config\.ts$/,
   /^cli\/main\.ts$/,
   /^office\/main\.ts$/,
-  /^sync\/client\.ts$/,
   /^workers\/[^/]+\.worker\.ts$/,
   /^service-worker\/[^/]+\.ts$/,
   /\.d\.ts$/,

@@ -12,6 +12,7 @@ const LadderScreen = lazy(() => import('./screens/ladder/ladder-screen.tsx').the
 const SheetScreen = lazy(() => import('./screens/sheet/sheet-screen.tsx').then((module) => module.SheetScreen))
 const VenueScreen = lazy(() => import('./screens/venue/venue-screen.tsx').then((module) => module.VenueScreen))
 const TeamScreen = lazy(() => import('./screens/team/team-screen.tsx').then((module) => module.TeamScreen))
+const SyncScreen = lazy(() => import('./screens/sync/sync-screen.tsx').then((module) => module.SyncScreen))
 const SettingsScreen = lazy(() =>
   import('./screens/settings/settings-screen.tsx').then((module) => module.SettingsScreen),
 )
@@ -38,6 +39,8 @@ export function App() {
           <Route path="/venue/:survey/walk/:walk/ladder" component={Ladder} />
           <Route path="/venue/:survey/walk/:walk/sheet" component={SheetPage} />
           <Route path="/settings" component={SettingsScreen} />
+          <Route path="/sync" component={SyncScreen} />
+          <Route path="/enrol" component={SyncScreen} />
           <Route default component={NotFound} />
         </Router>
       </ErrorBoundary>

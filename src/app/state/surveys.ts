@@ -24,24 +24,37 @@ export async function listSurveys(): Promise<void> {
   rows.value = await (await phoneStore()).surveys()
 }
 
-export type Begun = { ok: true; survey: string; name: string } | { ok: false; problems: readonly Problem[] }
+/** `before`: entries of it that were here; `added`: those that came in. */
+export type Begun =
+  | { ok: true; survey: string; name: string; before: number; added: number }
+  | Refused
+  | { ok: false; what: string; whatToDo: string }
+
+/** A file that does not read as a survey. */
+export interface Refused {
+  ok: false
+  problems: readonly Problem[]
+}
 
 /** A new venue with nothing but its name. */
 export async function beginVenue(name: string): Promise<Begun> {
   const survey = newId('survey')
   const store = await phoneStore()
   const saved = await store.append(survey, nameVenue(emptyLog(survey), { name }), choices.value.person)
-  return saved.saved ? { ok: true, survey, name } : refused(saved)
+  return saved.saved ? { ok: true, survey, name, before: 0, added: saved.facts.length } : refused(saved)
 }
 
 /** Takes a survey file's facts in beside what is here: nothing here is changed or lost by it. */
 export async function takeInFile(text: string): Promise<Begun> {
   const file = readSurveyFile(text, measuredIn)
   if (!file.ok) return { ok: false, problems: file.problems }
-  const taken = await (await phoneStore()).takeIn(allFacts(file.log))
+  const { survey, view } = file.survey
+  const store = await phoneStore()
+  const before = (await store.seen(survey)).reduce((all, [, n]) => all + n, 0)
+  const taken = await store.takeIn(allFacts(file.log))
   if (!taken.saved) return refused(taken)
   await catchUpSessions()
-  return { ok: true, survey: file.survey.survey, name: file.survey.view.name }
+  return { ok: true, survey, name: view.name, before, added: taken.added.length }
 }
 
 /** The last file made of a survey: when, and how many entries were in it. */
@@ -71,5 +84,5 @@ export async function surveyFile(survey: string): Promise<{ text: string; facts:
 }
 
 function refused({ what, whatToDo }: { what: string; whatToDo: string }): Begun {
-  return { ok: false, problems: [{ path: '', expected: 'room on this phone', found: what, whatToDo }] }
+  return { ok: false, what, whatToDo }
 }

@@ -61,6 +61,11 @@ export function SettingsScreen() {
             chosen={hand}
             choose={(value) => void set({ hand: value as Choices['hand'] })}
           />
+          <p>
+            <a class="row-link" href="/sync">
+              Office: enrol this phone, send, sign out
+            </a>
+          </p>
           <p class="soft">Published limits are chosen for each venue, on its page.</p>
         </section>
         <div class="stack">

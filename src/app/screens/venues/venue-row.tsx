@@ -3,6 +3,7 @@ import { worstVerdict } from '../../../judge/worst.ts'
 import { allFacts } from '../../../record/log.ts'
 import { dayAndHour, dayWords } from '../../components/day-words.ts'
 import { VerdictMark } from '../../components/verdict-mark.tsx'
+import { surveyIs } from '../../state/office-said.ts'
 import { openSession } from '../../state/open-session.ts'
 import type { Session } from '../../state/session.ts'
 import { type Copy, lastCopy, type OnPhone } from '../../state/surveys.ts'
@@ -27,7 +28,7 @@ export function VenueRow({ row }: { row: OnPhone }) {
         {walks === null ? '' : `${walks === 1 ? '1 walk' : `${walks} walks`} · `}last entry {dayAndHour(row.changed)}
       </p>
       {session && !session.survey.value.view.demo && (
-        <p class="soft">{waiting(allFacts(session.log()).length, copy)}</p>
+        <p class="soft">{surveyIs.value.get(row.survey) ?? waiting(allFacts(session.log()).length, copy)}</p>
       )}
     </li>
   )
