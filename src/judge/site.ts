@@ -22,8 +22,9 @@ export interface Site {
   width: Interval | null
   length: Interval | null
   slope: Slope
-  /** Wet floors are to be reckoned with here. */
+  /** Wet floors are to be reckoned with here; and not at patches alone. */
   wetApplies: boolean
+  wetAround: boolean
   /** Judged with a wet floor this time. */
   wet: boolean
 }
@@ -56,13 +57,13 @@ export function siteOf(setting: Setting, walk: Walk, index: number, wet: boolean
   const zone = setting.view.zones.find((one) => one.id === segment.zone) ?? null
   const around = withNoiseOf(setting, zone ? surroundingsOf(setting, zone) : nobody, segment)
   const patch = segment.features.some((one) => one.kind === 'wet-patch' || one.kind === 'loose-ground')
-  const wetApplies =
-    patch ||
+  const wetAround =
     segment.words.wetness?.says === 'wet' ||
     // What nobody said of the zone is reckoned wet.
     zone?.outdoors !== false ||
     zone?.nearOutsideDoor !== false ||
     zone?.words.mopped?.says !== 'no'
+  const wetApplies = patch || wetAround
   return {
     setting,
     walk,
@@ -71,13 +72,14 @@ export function siteOf(setting: Setting, walk: Walk, index: number, wet: boolean
     after: walk.segments[index + 1] ?? null,
     zone,
     around,
+    wetAround,
+    wetApplies,
     reaction: reaction(setting.team, around),
     outdoors: zone?.outdoors === true,
     led: segment.ledBy === 'robot',
     width: read(setting, segment, 'width', 'low'),
     length: read(setting, segment, 'length', 'low'),
     slope: slopeOf(setting, segment),
-    wetApplies,
     wet: wet && wetApplies,
   }
 }

@@ -43,7 +43,21 @@ export interface IntervalOptions {
 /** Expanded uncertainty (k = 2) of one reading, in its SI unit. An unknown instrument counts as told. */
 export function uncertainty(reading: Pick<Reading, 'instrument' | 'value'>, changed: Changed = {}): number {
   const row = changed[reading.instrument] ?? instrument(reading.instrument) ?? (instrument('told') as Instrument)
-  return row.absolute + row.relative * Math.abs(reading.value)
+  return Math.max(0, row.absolute) + Math.max(0, row.relative) * Math.abs(reading.value)
+}
+
+/** The same interval of the sizes, for what may be entered with a sign: a step down as less than nothing. */
+export function magnitude(one: Interval): Interval {
+  if (one.low >= 0) return one
+  const most = Math.max(Math.abs(one.low), Math.abs(one.high))
+  const low = one.high < 0 ? -one.high : 0
+  return { ...one, low, value: Math.abs(one.value), high: most, unsafe: most, safe: low }
+}
+
+/** The value that a limit is compared with "at the reading itself"; beyond a bound, where the harm lies, without end. */
+export function atReading({ low, value, high }: Interval, unsafe: 'low' | 'high'): number {
+  const end = unsafe === 'low' ? low : high
+  return Number.isFinite(end) ? value : end
 }
 
 /** The joined interval, or null where there is no reading that counts. A value that is no number breaks a promise: throws. */

@@ -1,4 +1,4 @@
-import type { Interval } from '../../record/interval.ts'
+import { atReading, type Interval, magnitude } from '../../record/interval.ts'
 import type { Feature } from '../../record/survey.ts'
 import { type Draft, epsilon, type Finding, finding } from '../finding.ts'
 import { read } from '../setting.ts'
@@ -42,12 +42,14 @@ export function isEdge(feature: Feature): boolean {
 function edgeKind({ setting }: Site, feature: Feature): { kind: Kind; by: Interval | null } {
   if (feature.kind === 'traffic-edge') {
     const kerb = read(setting, feature, 'kerb', 'low')
-    return { kind: kerb && kerb.value >= holdsWheels - epsilon ? 'kerb' : 'traffic', by: kerb }
+    if (!kerb || atReading(kerb, 'low') < holdsWheels - epsilon) return { kind: 'traffic', by: kerb }
+    return { kind: atReading(kerb, 'high') <= kerbHeight + epsilon ? 'kerb' : 'drop', by: kerb }
   }
   if (feature.kind !== 'kerb-edge') return { kind: 'drop', by: null }
   const height = read(setting, feature, 'height', 'high')
   // A kerb of unknown height is as deep as it likes.
-  return { kind: height && height.value <= kerbHeight + epsilon ? 'kerb' : 'drop', by: height }
+  const most = height ? atReading(magnitude(height), 'high') : Number.POSITIVE_INFINITY
+  return { kind: most <= kerbHeight + epsilon ? 'kerb' : 'drop', by: height }
 }
 
 function judged(site: Site, feature: Feature, distance: Interval): Finding {
@@ -86,8 +88,10 @@ function cautionOf(kind: Kind): string {
     : 'Traffic near the way. If the ground changes underfoot, stop.'
 }
 
-function stateOf(kind: Kind, { low, value, high }: Interval): Draft['raw'] {
+function stateOf(kind: Kind, distance: Interval): Draft['raw'] {
+  const { low, high } = distance
   if (kind === 'kerb') {
+    const value = atReading(distance, 'low')
     if (value > kerbWithin + epsilon || value >= kerbCaution - epsilon) return 'passes'
     return value < kerbHelp - epsilon ? 'needs-help' : 'tight'
   }

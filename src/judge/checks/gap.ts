@@ -50,6 +50,8 @@ function judged(site: Site, feature: Feature, wide: Interval, capacity: number, 
     ratio,
     caution: over || state !== 'passes' ? 'Gap underfoot. Stop, and find both its edges with your foot.' : null,
     from: [wide],
+    // A grid is the surface's; a gap is a step, a sill a door.
+    strict: feature.kind !== 'grating',
     ...(help ? { help } : {}),
   })
 }

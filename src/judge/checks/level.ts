@@ -1,5 +1,5 @@
 import { kind } from '../../catalogue/kinds.ts'
-import type { Interval } from '../../record/interval.ts'
+import { type Interval, magnitude } from '../../record/interval.ts'
 import type { Feature } from '../../record/survey.ts'
 import { limit } from '../../standards/packs.ts'
 import { epsilon, type Finding, finding, ratioOf, stateOf } from '../finding.ts'
@@ -19,7 +19,7 @@ export function level(site: Site): Finding[] {
     const row = kind(feature.kind)
     if (!row?.feeds.includes('level')) return []
     const height = read(site.setting, feature, heights[feature.kind] ?? heightOf(row.aspect), 'high')
-    return height ? [judged(site, feature, height)] : []
+    return height ? [judged(site, feature, magnitude(height))] : []
   })
 }
 

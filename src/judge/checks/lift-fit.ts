@@ -42,6 +42,7 @@ export function liftFit(site: Site, rooms: RoomSolver): Finding[] {
           ratio,
           caution: fits === 'tight' ? 'Short lift. Gather the leash close.' : null,
           from: [depth],
+          strict: true,
           ...(fits === 'fails' || fits === 'unsure' ? {} : { help }),
         }),
       ]
@@ -65,13 +66,15 @@ function wayOut({ setting, segment }: Site, id: string, name: string, car: Pinch
   })
   const demand = team.envelope + 2 * need
   const side = (end: number | null) => (end === null ? 0 : team.envelope + 2 * end)
-  const raw = backs && !shown ? 'unsure' : roomState(room, need, frameBand)
+  const fits = roomState(room, need, frameBand)
+  const unshown = backs && !shown && fits !== 'fails'
+  const raw = unshown ? 'unsure' : fits
   return finding({
     id: 'lift-fit',
     feature: id,
     subject: `Way out of ${name}`,
     detail: () =>
-      backs && !shown ? 'backing out is not shown' : `${metresThere(room.low ?? 0)} a side for ${metresNeeded(need)}`,
+      unshown ? 'backing out is not shown' : `${metresThere(room.low ?? 0)} a side for ${metresNeeded(need)}`,
     harm: 'trap',
     source: 'common practice',
     raw,
@@ -80,5 +83,6 @@ function wayOut({ setting, segment }: Site, id: string, name: string, car: Pinch
     ratio: ratioOf({ low: demand, high: demand }, { low: side(room.low), high: side(room.high) }),
     caution: raw === 'tight' ? 'Little room in the lift. Gather the leash close.' : null,
     from: car.from,
+    strict: true,
   })
 }

@@ -27,7 +27,7 @@ export function overhead(site: Site): Finding[] {
     if (!kind(feature.kind)?.feeds.includes('overhead')) continue
     const lowest = read(setting, feature, lowestOf(feature), 'low')
     if (!lowest) continue
-    const head = lowestOf(feature) === 'headHeight'
+    const head = lowestOf(feature) === 'headHeight' && feature.kind !== 'narrowing'
     found.push(
       judged(site, feature.id, `Overhead at ${nameOf(feature)}`, lowest, head, helpLedOtherwise(site, feature)),
     )

@@ -15,8 +15,14 @@ export function slip(site: Site): Finding[] {
   const values = holders
     .map((one) => ({ id: one.id, value: read(setting, one, 'pendulum', 'low') }))
     .filter((one): one is { id: string; value: Interval } => one.value !== null)
-  if (values.length === 0) return [withoutValue(site)]
-  return values.map(({ id, value }) => judged(site, id, value))
+  const found = values.map(({ id, value }) => judged(site, id, value))
+  return values.some((one) => one.id === segment.id) || !isOpen(site) ? found : [...found, withoutValue(site)]
+}
+
+/** Whether some wet floor has no value of its own: all of it, or a patch. A grid's value is the grid's. */
+function isOpen({ segment, wetAround }: Site): boolean {
+  const patches = segment.features.filter((one) => one.kind === 'wet-patch' || one.kind === 'loose-ground')
+  return wetAround || patches.some((one) => one.readings.pendulum === undefined)
 }
 
 function judged({ segment, slope }: Site, feature: string, value: Interval): Finding {
@@ -40,8 +46,7 @@ function judged({ segment, slope }: Site, feature: string, value: Interval): Fin
 }
 
 function withoutValue({ segment }: Site): Finding {
-  const loose = segment.features.some((one) => one.kind === 'loose-ground')
-  const smooth = floorClass(segment) === 'smooth' && !loose
+  const smooth = floorClass(segment) === 'smooth'
   return finding({
     id: 'slip',
     feature: segment.id,

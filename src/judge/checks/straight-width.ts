@@ -30,11 +30,31 @@ export function straightWidth(site: Site): Finding[] {
     if (!clear) continue
     const length = read(setting, feature, 'length', 'high')
     if (length && length.high < pinchLength) continue
-    const inUse = feature.readings.clearWidth?.some((one) => one.found === 'in-use') ?? false
+    const counted = feature.readings.clearWidth?.filter((one) => clear.ids.includes(one.id)) ?? []
+    const inUse = counted.every((one) => one.found === 'in-use')
     const taken = feature.kind === 'seats-facing' && !inUse ? occupied : 0
     found.push(judged(site, feature.id, `Width at ${nameOf(feature)}`, clear, taken))
   }
-  return found
+  return [...found, ...lengthy(site)]
+}
+
+/** Openings and obstructions too long to be a pinch only: what they leave is a narrow stretch. */
+function lengthy(site: Site): Finding[] {
+  const { setting, segment, width } = site
+  return segment.features.flatMap((feature) => {
+    const subject = `Width at ${nameOf(feature)}`
+    if (feature.kind === 'obstruction') {
+      const depth = read(setting, feature, 'depth', 'high')
+      const length = read(setting, feature, 'length', 'high')
+      if (!depth || !width || (length && length.high < pinchLength)) return []
+      const left = { ...width, low: width.low - depth.high, high: width.high - depth.low }
+      return [{ ...judged(site, feature.id, subject, left, 0), told: width.told || depth.told }]
+    }
+    const thick = read(setting, feature, 'wallThickness', 'high')
+    const clear = read(setting, feature, 'clearWidth', 'low')
+    if (!thick || thick.high < pinchLength || !clear) return []
+    return kind(feature.kind)?.feeds.includes('turn') ? [judged(site, feature.id, subject, clear, 0)] : []
+  })
 }
 
 /** "lockers" is at the lockers; "between the pillars" says it itself. */
