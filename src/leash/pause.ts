@@ -15,13 +15,21 @@ interface Pose {
 }
 
 /**
- * The way of a robot on a slack leash round a standing handler, from one taut pose to another: a flood of poses on the
- * grid inside the leash's disc, in sight of the handler, apart from him, at clearance `level` or better; then drawn
- * straight. The nodes between, all slack; null where there is no way. The last pose's direction is unwound along it.
+ * The way of a robot on a slack leash round a standing handler, from a taut pose to the first of `targets` (taut poses
+ * at the same handler, the wanted one first) that can be reached: a flood of poses on the grid inside the leash's disc,
+ * in sight of the handler, apart from him, at clearance `level` or better; then drawn straight. The nodes between, all
+ * slack; null where no target is reached. `psi` is the target's direction, unwound along the way.
  */
-export function pauseWay(quest: Quest, from: Node, to: Node, level: Metres): { nodes: Node[]; psi: Radians } | null {
-  const poses = flood(quest, from, to, level)
-  if (!poses) return null
+export function pauseWay(
+  quest: Quest,
+  from: Node,
+  targets: readonly Node[],
+  level: Metres,
+): { target: number; nodes: Node[]; psi: Radians } | null {
+  const reached = flood(quest, from, targets, level)
+  if (!reached) return null
+  const { poses, target } = reached
+  const to = targets[target] as Node
   const straight = drawStraight(quest, from, poses, level)
   const nodes: Node[] = []
   let psi = from.psi
@@ -44,7 +52,7 @@ export function pauseWay(quest: Quest, from: Node, to: Node, level: Metres): { n
   }
   // The last of them is the taut pose itself, which the next stretch begins with.
   nodes.pop()
-  return { nodes, psi: psi + wrap(to.psi - psi) }
+  return { target, nodes, psi: psi + wrap(to.psi - psi) }
 }
 
 /** Whether a slack pose keeps everything: clearances, the leash in sight, the bodies apart, the leash long enough. */
@@ -95,7 +103,12 @@ function attachmentOf(node: Node): Pose {
 const unseen = -2
 const root = -1
 
-function flood(quest: Quest, from: Node, to: Node, level: Metres): Pose[] | null {
+function flood(
+  quest: Quest,
+  from: Node,
+  targets: readonly Node[],
+  level: Metres,
+): { target: number; poses: Pose[] } | null {
   const { tables, separation } = quest
   const { grid, robot } = tables
   const i0 = Math.max(0, Math.floor((from.x - separation - grid.x0) / grid.dx))
@@ -143,8 +156,6 @@ function flood(quest: Quest, from: Node, to: Node, level: Metres): Pose[] | null
       }
     return found
   }
-  const targets = new Set(ends(to))
-  if (targets.size === 0) return null
   const queue = new Int32Array(columns * rows * directions)
   let tail = 0
   for (const state of ends(from)) {
@@ -153,7 +164,6 @@ function flood(quest: Quest, from: Node, to: Node, level: Metres): Pose[] | null
   }
   for (let head = 0; head < tail; head++) {
     const state = queue[head] as number
-    if (targets.has(state)) return trace(state)
     const place = Math.floor(state / directions)
     const t = state % directions
     const i = place % columns
@@ -171,9 +181,13 @@ function flood(quest: Quest, from: Node, to: Node, level: Metres): Pose[] | null
     visit(place, (t + 1) % directions)
     visit(place, (t + directions - 1) % directions)
   }
+  for (const [target, to] of targets.entries()) {
+    const last = ends(to).find((state) => parent[state] !== unseen)
+    if (last !== undefined) return { target, poses: trace(last, to) }
+  }
   return null
 
-  function trace(last: number): Pose[] {
+  function trace(last: number, to: Node): Pose[] {
     const poses: Pose[] = [attachmentOf(to)]
     for (let state = last; state !== root; state = parent[state] as number) {
       const place = Math.floor(state / directions)

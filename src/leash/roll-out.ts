@@ -76,19 +76,34 @@ function pausesFrom(field: Field, below: Layer): Float32Array {
   return least
 }
 
-/** The cheapest state of the layer below at a node, and what it costs to pause there and go on from it. */
-function pauseFrom(field: Field, below: Layer, at: number): { cost: number; state: number; k: number } {
-  const best = { cost: unreachable, state: 0, k: 0 }
+/** Where the leash may be taken up again at a node, the cheapest first; no more than can be looked at. */
+function targetsOf(field: Field, below: Layer, at: number): Target[] {
+  const targets: Target[] = []
   for (let k = 0; k < directions; k++)
     for (let run = 0; run < 2; run++) {
       const s = field.slot[(k * field.count + at) * 2 + run] as number
-      if (s === 0 || (below.cost[s] as number) + pauseCost >= best.cost) continue
-      best.cost = (below.cost[s] as number) + pauseCost
-      best.state = s
-      best.k = k
+      if (s === 0 || (below.cost[s] as number) >= unreachable) continue
+      targets.push({
+        cost: below.cost[s] as number,
+        k,
+        run: [field.first[s] as number, field.last[s] as number],
+      })
     }
-  return best
+  return targets.sort((one, other) => one.cost - other.cost).slice(0, 48)
 }
+
+/** A direction of the leash with a run of headings, in which the layer below can be gone on with. */
+export interface Target {
+  cost: number
+  k: number
+  run: [number, number]
+}
+
+/**
+ * Asked at each pause: the stretch walked so far and where the leash may be taken up. Gives the target the robot can
+ * reach, or null where it can reach none.
+ */
+export type Pauser = (stretch: Node[], targets: Target[]) => Target | null
 
 /** Least cost over the runs of a direction's node that overlap [from, to]. */
 function cheapest(field: Field, cost: Float32Array, cell: number, from: number, to: number): number {
@@ -222,8 +237,10 @@ function runAt(
 /** A rolled-out motion: taut stretches, between each two a pause at a standing handler. */
 export interface Rolled {
   stretches: Node[][]
-  /** Node of the field beside each pause, to ban where the robot turns out not to get through. */
+  /** Node of the field beside each pause. */
   pausedAt: number[]
+  /** False where the robot could not get through at the last of them. */
+  through: boolean
 }
 
 /**
@@ -238,12 +255,13 @@ export function rollOut(
   level: Metres,
   start: { x: Metres; y: Metres; psi: Radians },
   banned?: Uint8Array,
+  pauser?: Pauser,
 ): Rolled | null {
   const slot = directionOf(1)
   let nodes: Node[] = [
     { x: start.x, y: start.y, psi: start.psi, length: field.separation, heading: start.psi, slack: false },
   ]
-  const rolled: Rolled = { stretches: [nodes], pausedAt: [] }
+  const rolled: Rolled = { stretches: [nodes], pausedAt: [], through: true }
   let n = layers.length - 1
   let k = Math.round(start.psi / slot)
   let run: [number, number] = [0, 0]
@@ -262,14 +280,17 @@ export function rollOut(
     if (below && walked >= 0.2) {
       const at = nearestNode(field, here.x, here.y)
       if (at >= 0 && !banned?.[at] && !field.goal[at]) {
-        const paused = pauseFrom(field, below, at)
-        if (paused.cost < unreachable && paused.cost <= move.total + 1e-3) {
-          n--
-          k = paused.k
-          run = [field.first[paused.state] as number, field.last[paused.state] as number]
-          nodes = [{ ...here, psi: k * slot, heading: (k + (run[0] + run[1]) / 2) * slot }]
-          rolled.stretches.push(nodes)
+        const targets = targetsOf(field, below, at)
+        const cheapest = targets[0]
+        if (cheapest && cheapest.cost + pauseCost <= move.total + 1e-3) {
           rolled.pausedAt.push(at)
+          const target = pauser?.(nodes, targets)
+          if (!target) return { ...rolled, through: false }
+          n--
+          k = target.k
+          run = target.run
+          nodes = [takenUp(here, target)]
+          rolled.stretches.push(nodes)
           lastTurn = 0
           walked = 0
           continue
@@ -293,6 +314,12 @@ export function rollOut(
     run = runAt(field, cost, to.x, to.y, at, move.run[0], move.run[1]) ?? move.run
   }
   return null
+}
+
+/** The handler's pose with the leash taut again in the target's direction, the robot amid its headings. */
+export function takenUp(here: Node, { k, run }: Target): Node {
+  const slot = directionOf(1)
+  return { ...here, psi: k * slot, heading: (k + (run[0] + run[1]) / 2) * slot }
 }
 
 interface Move {

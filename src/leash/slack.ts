@@ -2,7 +2,7 @@ import type { Metres } from '../units/quantity.ts'
 import type { Field } from './field.ts'
 import type { Node } from './nodes.ts'
 import { pauseWay } from './pause.ts'
-import { costToGo, type Layer, type Rolled, rollOut } from './roll-out.ts'
+import { costToGo, type Layer, rollOut, type Target, takenUp } from './roll-out.ts'
 import {
   better,
   depth,
@@ -22,7 +22,7 @@ import { withPause } from './value.ts'
 /** At most so many pauses; more is no guiding. */
 export const mostPauses = 3
 /** How often a place for a pause is tried, found impossible and banned, before the level is given up. */
-const mostBans = 4
+const mostBans = 6
 
 export interface SlackResult {
   /** Best proved motion with at most n pauses, by n; index 0 is the taut one. */
@@ -95,20 +95,23 @@ function searchWith(
     for (const [i, layer] of values.layers.entries())
       layers.push({ value: layer, cost: costToGo(field, layer, level, 60, layers[i - 1], banned) })
     const { x, y, heading } = quest.scene.start
-    const rolled = rollOut(quest.scene, field, layers, level, { x, y, psi: heading }, banned)
+    const joiner = new Joiner(quest, level)
+    const start = { x, y, psi: heading }
+    const rolled = rollOut(quest.scene, field, layers, level, start, banned, (stretch, to) => joiner.pause(stretch, to))
     if (!rolled) break
-    const joined = join(quest, rolled, level)
-    if (typeof joined === 'number') {
-      banAround(field, banned, rolled.pausedAt[joined] as number)
-      continue
+    const joined = rolled.through ? joiner.end(rolled.stretches.at(-1) as Node[]) : null
+    if (joined) {
+      found = better(found, polishAndProve(quest, joined))
+      proofs++
+      if (rolled.pausedAt.length === 0) break
+      // Another place to pause is tried once where there may be much more to gain.
+      if (found && found.certificate.clearance >= Math.min(enough, value + shortfall(quest.separation)) - 0.012) break
+      if (found && found.certificate.clearance >= level && proofs >= 2) break
     }
-    found = better(found, polishAndProve(quest, joined))
-    proofs++
-    if (rolled.pausedAt.length === 0) break
-    // Another place to pause is tried once where there may be much more to gain.
-    if (found && found.certificate.clearance >= Math.min(enough, value + shortfall(quest.separation)) - 0.012) break
-    if (found && found.certificate.clearance >= level && proofs >= 2) break
-    for (const at of rolled.pausedAt) banAround(field, banned, at)
+    const last = rolled.pausedAt.at(-1)
+    if (last === undefined) break
+    if (joined) for (const at of rolled.pausedAt) banAround(field, banned, at)
+    else banAround(field, banned, last)
   }
   return { found, settled }
 }
@@ -131,34 +134,45 @@ function layersOf(
   return { layers, settled }
 }
 
-/** Joins the stretches by the robot's ways on the slack leash; the number of the first pause that has none. */
-function join(quest: Quest, rolled: Rolled, level: Metres): Node[] | number {
-  let nodes: Node[] = []
-  for (const [i, stretch] of rolled.stretches.entries()) {
-    let begin = stretch
-    const last = nodes.at(-1)
-    if (last) {
-      const way = wayBetween(quest, last, stretch[0] as Node, level)
-      if (!way) return i - 1
-      nodes = nodes.concat(way.nodes)
-      const unwind = way.psi - (stretch[0] as Node).psi
-      const heading = (way.nodes.at(-1) ?? last).heading
-      begin = stretch.map((node) => ({ ...node, psi: node.psi + unwind, heading }))
-    }
-    const turned = headed(quest, begin, level)
-    if (!turned) return Math.max(0, i - 1)
-    nodes = nodes.concat(turned)
-  }
-  return nodes
-}
+/** Joins stretches by the robot's ways on the slack leash, as they are rolled out. */
+class Joiner {
+  private nodes: Node[] = []
+  /** What the next stretch's leash directions are short of the unwound ones, and the heading it begins with. */
+  private unwind = 0
+  private readonly quest: Quest
+  private readonly level: Metres
 
-function wayBetween(quest: Quest, from: Node, to: Node, level: Metres) {
-  // The grid is coarse: a way a little tighter is still worth polishing.
-  for (const below of [0, 0.015, 0.03]) {
-    const way = pauseWay(quest, from, to, level - below)
-    if (way) return way
+  constructor(quest: Quest, level: Metres) {
+    this.quest = quest
+    this.level = level
   }
-  return null
+
+  /** A stretch has come to a pause: the target the robot can reach, null where it can reach none. */
+  pause(stretch: Node[], targets: Target[]): Target | null {
+    if (!this.end(stretch)) return null
+    const last = this.nodes.at(-1) as Node
+    const poses = targets.map((target) => takenUp(last, target))
+    // The grid is coarse: a way a little tighter is still worth polishing.
+    for (const below of [0, 0.015, 0.03]) {
+      const way = pauseWay(this.quest, last, poses, this.level - below)
+      if (!way) continue
+      this.nodes.push(...way.nodes)
+      this.unwind = way.psi - (poses[way.target] as Node).psi
+      return targets[way.target] as Target
+    }
+    return null
+  }
+
+  /** The motion so far with the stretch at its end; null where the robot finds no headings for it. */
+  end(stretch: Node[]): Node[] | null {
+    const before = this.nodes.at(-1)
+    const heading = before?.heading ?? (stretch[0] as Node).heading
+    const begun = stretch.map((node) => ({ ...node, psi: node.psi + this.unwind, heading }))
+    const turned = headed(this.quest, begun, this.level)
+    if (!turned) return null
+    this.nodes.push(...turned)
+    return this.nodes
+  }
 }
 
 function banAround(field: Field, banned: Uint8Array, at: number): void {
