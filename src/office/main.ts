@@ -17,13 +17,12 @@ const usage = `Usage: node dist/office.js COMMAND
 Settings come from the environment: TAUTLINE_DATA, DATABASE_URL, HOST, PORT, TAUTLINE_ORIGIN, TAUTLINE_TRUST_PROXY,
 TAUTLINE_REQUESTS_A_MINUTE, TAUTLINE_LOG.`
 
-/** Back-ups and codes are for this user alone. */
-process.umask(0o077)
-
 if (isMainThread) await main(process.argv.slice(2))
 else answerAsCore()
 
 async function main([command = 'serve', ...rest]: string[]): Promise<void> {
+  // What it writes is for this user alone.
+  process.umask(0o077)
   try {
     if (command === '--help' || command === 'help') return console.log(usage)
     const settings = readSettings(process.env)

@@ -15,30 +15,21 @@ import { startWorker } from './worker.ts'
 /** Starts the office and keeps it until it is told to stop; then it ends what is under way and lets go of its folder. */
 export async function serve(settings: Settings, program: { file: URL; dist: string; version: string }): Promise<void> {
   const { db, engine, close } = await openDatabase({ folder: settings.folder, url: settings.databaseUrl })
-  const core = startCore(program.file)
+  // Two threads: a sheet that somebody waits for never stands behind a venue judged in the background.
+  const background = startCore(program.file)
+  const desk = startCore(program.file)
   const office: Office = {
     db,
     photos: folderOfPhotos(join(settings.folder, 'photos')),
     now: Date.now,
-    judge: core.judge,
-    makeSheet: core.makeSheet,
+    judge: background.judge,
+    makeSheet: desk.makeSheet,
     version: program.version,
     process: newId('process'),
   }
   const dist = existsSync(join(program.dist, 'index.html')) ? program.dist : null
   const { app } = await buildServer(office, { ...settings, dist })
   const worker = startWorker(office, (error) => app.log.error({ err: error }, 'work in the background failed'))
-  const address = await app.listen({ host: settings.host, port: settings.port }).catch(async (error: unknown) => {
-    await worker.stop()
-    await core.close()
-    await close()
-    throw error
-  })
-  const lines = [`Tautline's office, version ${program.version}, on ${engine}`, ...summary(settings)]
-  if (!dist) lines.push('The app is not built: only the interface for phones is served. Run `npm run build`.')
-  lines.push(...(await firstInvitation(office, settings)), `Tautline's office is at ${address}`)
-  console.log(lines.join('\n'))
-
   let stopping = false
   const stop = async (signal: string) => {
     if (stopping) return
@@ -47,12 +38,23 @@ export async function serve(settings: Settings, program: { file: URL; dist: stri
     await app.close()
     const idle = worker.stop()
     // A judgement under way may have minutes to go: it is broken off, and begun again after the next start.
-    await core.close()
+    await Promise.all([background.close(), desk.close()])
     await idle
     await close()
     process.exitCode = 0
   }
   for (const signal of ['SIGTERM', 'SIGINT'] as const) process.once(signal, () => void stop(signal))
+  const address = await app.listen({ host: settings.host, port: settings.port }).catch(async (error: unknown) => {
+    const idle = worker.stop()
+    await Promise.all([background.close(), desk.close()])
+    await idle
+    await close()
+    throw error
+  })
+  const lines = [`Tautline's office, version ${program.version}, on ${engine}`, ...summary(settings)]
+  if (!dist) lines.push('The app is not built: only the interface for phones is served. Run `npm run build`.')
+  lines.push(...(await firstInvitation(office, settings)), `Tautline's office is at ${address}`)
+  console.log(lines.join('\n'))
 }
 
 /** While no administrator has a working device, the start prints a code for one. */

@@ -2,7 +2,10 @@ import { type ChildProcess, spawn } from 'node:child_process'
 import { rmSync } from 'node:fs'
 import { afterAll, describe, expect, inject, test } from 'vitest'
 import type { Fact } from '../../src/record/facts.ts'
+import { allFacts } from '../../src/record/log.ts'
+import { addReading, markState } from '../../src/record/operations/index.ts'
 import type { SyncReply } from '../../src/sync/messages.ts'
+import { act, smallVenue, tape } from '../record/build.ts'
 import { engines, fact, freshPlace, message } from './office-under-test.ts'
 import { seeded } from './seeded.ts'
 
@@ -131,10 +134,10 @@ describe.each(engines)('the program on %s', (engine) => {
       body.token,
       '/api/surveys/s/sync',
       message([fact('s', 1, { survey: 's' })]),
-    )
+    ).catch(() => null)
     office.child.kill('SIGTERM')
     expect(await office.ended).toBe(0)
-    const reply = await sent.catch(() => null)
+    const reply = await sent
     const again = await start(place)
     // A code is printed at a start only while no administrator can sign in.
     expect(again.said()).not.toContain('code for')
@@ -145,6 +148,48 @@ describe.each(engines)('the program on %s', (engine) => {
     expect(await again.ended).toBe(0)
     rmSync(place.folder, { recursive: true, force: true })
   })
+})
+
+test('the program judges and makes sheets in threads of its own', async () => {
+  const place = await freshPlace('sqlite')
+  const office = await start(place)
+  const code = /code for Administrator: (\S+)/.exec(office.said())?.[1]
+  const enrolled = await post<{ token: string }>(office.address, null, '/api/enrol', { code, label: 'x', record: '' })
+  const enter = async (role: string) => {
+    const invited = await post<{ code: string }>(office.address, enrolled.body.token, '/api/people', {
+      name: role,
+      role,
+    })
+    const { body } = await post<{ token: string }>(office.address, null, '/api/enrol', {
+      code: invited.body.code,
+      label: role,
+      record: '',
+    })
+    return body.token
+  }
+  const [surveyor, reviewer] = [await enter('surveyor'), await enter('reviewer')]
+  const today = new Date().toISOString()
+  const phone = smallVenue('a', 'Ada')
+  act(phone, (log) => addReading(log, 's1', 'width', tape('s1-width', 1.6, { time: today })))
+  act(phone, (log) => markState(log, 'w', { state: 'surveyed', name: 'Ada', date: today.slice(0, 10) }))
+  const base = '/api/surveys/venue-1'
+  const sent = await post<SyncReply>(office.address, surveyor, `${base}/sync`, message(allFacts(phone.log)))
+  const signature = { statement: 'Looked through', have: sent.body.ack }
+  expect((await post(office.address, reviewer, `${base}/walks/w/sign`, signature)).status).toBe(200)
+  const issued = await post(office.address, reviewer, `${base}/walks/w/issue`, { form: 'venue', changes: '' })
+  expect(issued).toMatchObject({ status: 201, body: { number: 1 } })
+  const headers = { authorization: `Bearer ${reviewer}` }
+  const get = async (path: string) => (await fetch(`${office.address}${path}`, { headers })).json()
+  expect(await get(`${base}/sheets/1`)).toMatchObject({ verdict: 'not-known', form: 'venue' })
+  // In the background the list gets its verdict: half the answers are missing, so nobody knows.
+  await expect
+    .poll(async () => ((await get('/api/surveys')) as { surveys: { verdict: string }[] }).surveys[0]?.verdict, {
+      timeout: 60_000,
+    })
+    .toBe('not-known')
+  office.child.kill('SIGTERM')
+  expect(await office.ended).toBe(0)
+  rmSync(place.folder, { recursive: true, force: true })
 })
 
 test('a second office on the same data folder does not start', async () => {
