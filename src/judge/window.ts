@@ -119,11 +119,14 @@ function worstFirst(a: Pair, b: Pair): number {
   return lexicographic(a.worst(), b.worst()) || a.leash - b.leash
 }
 
+/** Ratios are ranked in steps of this: a certificate may lose half a millimetre, and that noise must not pick a leash. */
+const told = 0.002
+
 /** Negative where `a` is the better of two lists sorted worst first. */
 export function lexicographic(a: readonly number[], b: readonly number[]): number {
   for (let i = 0; i < Math.max(a.length, b.length); i++) {
-    const left = a[i] ?? Number.NEGATIVE_INFINITY
-    const right = b[i] ?? Number.NEGATIVE_INFINITY
+    const left = Math.round((a[i] ?? Number.NEGATIVE_INFINITY) / told)
+    const right = Math.round((b[i] ?? Number.NEGATIVE_INFINITY) / told)
     if (left !== right) return left - right
   }
   return 0
