@@ -108,6 +108,14 @@ test('PDF, word-processor file and braille are made on the phone with no network
       expect(contracted.bytes.length).toBeLessThan(plain.bytes.length)
     })
 
+    await test.step('the licences lie beside the extras, and are read without a network too', async () => {
+      const opened = page.context().waitForEvent('page')
+      await extras.getByRole('link', { name: 'its terms in full' }).tap()
+      const licence = await opened
+      await expect(licence.locator('body')).toContainText('GNU LESSER GENERAL PUBLIC LICENSE')
+      await licence.close()
+    })
+
     await test.step('removed in Settings; without a network they do not come back, and it says what to do', async () => {
       await page.goto(new URL('/settings', page.url()).href)
       await expect(extras.getByText(/^Here, /)).toBeVisible()
