@@ -5,12 +5,14 @@ import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { type OfficeUnderTest, startOffice } from './office-under-test.ts'
 
 describe('the app, served by the office', () => {
-  const dist = mkdtempSync(join(tmpdir(), 'tautline-dist-'))
+  const root = mkdtempSync(join(tmpdir(), 'tautline-dist-'))
+  const dist = join(root, 'dist')
   let under: OfficeUnderTest
   const get = (path: string) => under.ask(null, 'GET', path)
 
   beforeAll(async () => {
-    mkdirSync(join(dist, 'assets'))
+    mkdirSync(join(dist, 'assets'), { recursive: true })
+    writeFileSync(join(root, 'secret.txt'), 'for the machine')
     writeFileSync(join(dist, 'index.html'), '<!doctype html><title>Tautline</title>')
     writeFileSync(join(dist, 'assets', 'main-abc123.js'), 'export const page = 1\n')
     writeFileSync(join(dist, 'sw.js'), '/* service worker */\n')
@@ -19,7 +21,7 @@ describe('the app, served by the office', () => {
   })
   afterAll(async () => {
     await under.close()
-    rmSync(dist, { recursive: true })
+    rmSync(root, { recursive: true })
   })
 
   test('any address without an extension is the page; its parts are found by name', async () => {
@@ -40,8 +42,9 @@ describe('the app, served by the office', () => {
       '/office.js',
       '/cli.js',
       '/.hidden.json',
-      '/%2e%2e/%2e%2e/etc/passwd',
-      '/..%2f..%2fetc%2fpasswd',
+      '/%2e%2e/secret.txt',
+      '/..%2fsecret.txt',
+      '/assets/..%2f..%2fsecret.txt',
       '/assets/none.js',
     ]
     for (const path of paths) {
