@@ -1,10 +1,12 @@
 import { boundaryOf } from '../geometry/boundary.ts'
+import { holds } from '../geometry/polygon-check.ts'
 import type { Scene } from '../geometry/scene.ts'
 import { sayProblem } from '../geometry/scene-problem.ts'
 import type { Metres } from '../units/quantity.ts'
 import type { Bodies, ClearanceAnswer, ClearanceOptions, Planner } from './answer.ts'
 import { apart } from './certify.ts'
 import { freeBound } from './free-bound.ts'
+import { arcFrom, type Node } from './nodes.ts'
 import { isCentred, straightNodes } from './opening.ts'
 import {
   better,
@@ -66,7 +68,7 @@ export const clearance: Planner = (scene, bodies, separation, options = {}) => {
     const found = prove(quest, straightNodes(scene, form, separation))
     if (found && found.certificate.clearance >= free - closedMargin) return answer(quest, found, free, options)
   }
-  if (!bodies.sideways) return nothing(high, false)
+  if (!bodies.sideways) return straightOn(quest, high, options)
   const taut = searchTaut(quest, passes)
   if (taut.settled) high = Math.min(high, highOf(quest, taut))
   if (options.slack === false) {
@@ -81,6 +83,24 @@ export const clearance: Planner = (scene, bodies, separation, options = {}) => {
     return { ...answer(quest, taut.found, high, options), decided: taut.settled }
   const slack = searchSlack(quest, taut, free, passes)
   return slackAnswer(quest, slack, high, free, taut.settled, options)
+}
+
+/**
+ * A robot that cannot walk sideways: straight on is proved where that is the whole way. For any other way there is no
+ * search yet, so the answer is undecided; what a robot that does walk sideways cannot exceed, it cannot either.
+ */
+function straightOn(quest: Quest, high: Metres, options: ClearanceOptions): ClearanceAnswer {
+  const { start, goal } = quest.scene
+  let node: Node = { ...start, psi: start.heading, length: quest.separation, slack: false }
+  const nodes = [node]
+  for (let i = 0; i < 400 && !holds(goal.polygon, node); i++) {
+    node = arcFrom(node, 0.05, 0, start.heading)
+    nodes.push(node)
+  }
+  const found = prove(quest, nodes)
+  if (!found || found.certificate.clearance < 0) return nothing(high, false)
+  const decided = found.certificate.clearance >= high - closedMargin
+  return { ...answer(quest, found, high, options), decided }
 }
 
 /** Passes over the field, each a look at every state twice. */

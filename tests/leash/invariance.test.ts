@@ -109,6 +109,16 @@ describe('searched scenes', () => {
     expect(Math.abs(wide - 0.062)).toBeLessThan(0.01)
   })
 
+  it('a robot on wheels: straight on is proved, round a corner nothing is claimed', () => {
+    const wheels = { ...referenceBodies, sideways: false }
+    const inLine = clearance(sceneOf(indoor(1.5, 0.8, 0.15, 0), wheels, 1), wheels, 1)
+    expect(inLine.decided).toBe(true)
+    expect(Math.abs((inLine.mTaut ?? 0) - 0.13)).toBeLessThan(0.002)
+    const corner = clearance(sceneOf(turn(1.3, 1.3, 90), wheels, 1), wheels, 1)
+    expect(corner.decided).toBe(false)
+    expect(corner.mTaut).toBeNull()
+  })
+
   it('work that is capped is undecided, with the free bounds at the high ends', () => {
     const S = 1
     const scene = sceneOf(turn(1, 1, 120), referenceBodies, S)
