@@ -7,9 +7,9 @@ import { type PhotosSent, sendPhotos } from './photos.ts'
 export { enrol, signOut } from './enrol.ts'
 export { type Exchanged, exchangeSurvey } from './exchange.ts'
 export type { Line } from './line.ts'
-export type { PhoneStore } from './phone-store.ts'
 export type { Role } from './messages.ts'
 export { type OfficeVenue, officeVenues } from './office-venues.ts'
+export type { PhoneStore } from './phone-store.ts'
 export { startRetrying } from './retry.ts'
 export { saysWhere, type Whereabouts, whereabouts } from './whereabouts.ts'
 
@@ -38,7 +38,9 @@ export async function syncAll(
 ): Promise<SurveySynced[]> {
   const results: SurveySynced[] = []
   for (const survey of surveys) {
-    const entries = await exchangeSurvey(line, store, survey, now, (progress) => tell({ doing: 'entries', ...progress }))
+    const entries = await exchangeSurvey(line, store, survey, now, (progress) =>
+      tell({ doing: 'entries', ...progress }),
+    )
     const photos = entries.ok
       ? await sendPhotos(line, store, survey, (done, total) => tell({ doing: 'photos', survey, done, total }))
       : null
