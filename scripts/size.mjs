@@ -1,5 +1,6 @@
-// The size budget: gzip kB of script before the strip can be used, and of all that is kept on the phone beforehand.
-import { readFileSync } from 'node:fs'
+// The size budget: script before the strip can be used; the shell with the HTML and text forms; all that is kept on the
+// phone beforehand, which adds the plan's map, the demo venues and the builders of the other forms.
+import { readdirSync, readFileSync, statSync } from 'node:fs'
 import { join } from 'node:path'
 import { gzipSync } from 'node:zlib'
 
@@ -34,8 +35,15 @@ const precached = [
 ]
 const kept = precached.reduce((sum, file) => sum + gzipped(file), 0)
 
+const demos = readdirSync('demo-venues').filter((name) => name.endsWith('.json'))
+const besides = new RegExp(`/(plan-map|to-pdf|to-word|${demos.map((name) => name.slice(0, -5)).join('|')})-`)
+const shell = precached
+  .filter((file) => !besides.test(file))
+  .reduce((sum, file) => sum + kB(statSync(join(dist, file)).size), 0)
+
 const rows = [
   { what: 'script before the strip can be used, gzip', kB: strip, budget: stripBudget },
+  { what: 'shell, judge, HTML and text forms, as kept', kB: shell, budget: precacheBudget },
   { what: `kept on the phone beforehand, as sent (gzip), ${precached.length} files`, kB: kept, budget: precacheBudget },
 ]
 for (const row of rows) console.log(`${row.kB.toFixed(1).padStart(7)} kB of ${row.budget}  ${row.what}`)
