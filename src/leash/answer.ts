@@ -1,4 +1,4 @@
-import type { Metres, Radians, Seconds } from '../units/quantity.ts'
+import type { Metres, Radians } from '../units/quantity.ts'
 
 /** The moving team as the planner needs it: a rectangle on a leash with a disc behind it. */
 export interface Bodies {
@@ -80,9 +80,3 @@ export type Planner = (
   separation: Metres,
   options?: ClearanceOptions,
 ) => ClearanceAnswer
-
-/** Duration parts of a motion, for drawing and for door times. */
-export interface MotionTiming {
-  walking: Seconds
-  standing: Seconds
-}

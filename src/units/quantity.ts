@@ -10,12 +10,8 @@ export type Degrees = number
 export type Seconds = number
 /** A speed in metres per second. */
 export type MetresPerSecond = number
-/** An acceleration in metres per second squared. */
-export type MetresPerSecondSquared = number
 /** A force in newtons. */
 export type Newtons = number
-/** A mass in kilograms. */
-export type Kilograms = number
 /** Rise over run, up positive: 1:12 is 0.0833. */
 export type Gradient = number
 /** A sound level in dB(A). */

@@ -1,6 +1,6 @@
 export { jsonSchema, schemaOf } from './json-schema.ts'
 export type { Problem } from './problem.ts'
-export { readSurveyFile, type SurveyFile } from './read-survey-file.ts'
+export { readSurveyFile } from './read-survey-file.ts'
 export type { AttributeOf } from './reading-field.ts'
-export { readTeamFile, type TeamFile, writeTeamFile } from './team-file.ts'
+export { readTeamFile, writeTeamFile } from './team-file.ts'
 export { writeSurveyFile } from './write-survey-file.ts'
