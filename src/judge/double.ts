@@ -26,7 +26,9 @@ export function judgeSegment(
   const wet = judgeSite(siteOf(setting, walk, index, true), rooms, nominal)
   if (!wet.site.wetApplies || holdsUp(wet)) return { judged: wet, dryOnly: false }
   const dry = judgeSite(siteOf(setting, walk, index, false), rooms, nominal)
-  return holdsUp(dry) ? { judged: dry, dryOnly: true } : { judged: wet, dryOnly: false }
+  if (holdsUp(dry)) return { judged: dry, dryOnly: true }
+  // Against a place counts only a wet floor that somebody spoke of.
+  return { judged: wet.site.wetSaid ? wet : dry, dryOnly: false }
 }
 
 function holdsUp(judged: Judged): boolean {

@@ -1,6 +1,8 @@
-import type { Override } from '../record/survey.ts'
+import { kind } from '../catalogue/kinds.ts'
+import type { Override, Segment } from '../record/survey.ts'
 import type { SegmentResult } from './result.ts'
 import type { Setting } from './setting.ts'
+import { featuresOf } from './site.ts'
 import { verdictRank } from './worst.ts'
 
 /** Missing answers that no practitioner can speak for beyond "with help". */
@@ -14,19 +16,25 @@ export function overridden(
   result: SegmentResult,
   overrides: readonly Override[],
   { on, team }: Pick<Setting, 'on' | 'team'>,
-  leash: number | null,
+  segment: Segment,
 ): SegmentResult {
+  const leash = result.checks.find((one) => one.at !== null)?.at?.leash ?? null
   const spoken = overrides.findLast(
     (one) =>
       one.segment === result.id &&
       [one.reason, one.name, one.role].every((text) => text.trim() !== '') &&
       one.until >= on &&
-      (one.team === undefined || one.team === team.card.revision) &&
-      (one.leash === undefined || one.leash === leash),
+      // One that names no team or leash was given for none that is known.
+      one.team === team.card.revision &&
+      (leash === null || one.leash === leash),
   )
   if (!spoken) return result
+  // An edge too close to call may be a stop item; what no catalogue knows may be anything.
   const capped =
-    result.checks.some((one) => one.id === 'stop-item') || result.missing.some((aspect) => fatal.has(aspect))
+    result.checks.some((one) => one.id === 'stop-item' || (one.id === 'edge' && one.state === 'unsure')) ||
+    result.missing.some((aspect) => fatal.has(aspect)) ||
+    result.why.some((one) => one.kind === 'told' && (one.harm === 'fall' || one.harm === 'head')) ||
+    featuresOf({ segment }).some((one) => kind(one.kind) === undefined)
   const verdict = capped && verdictRank(spoken.verdict) < verdictRank('with-help') ? 'with-help' : spoken.verdict
   const { reason, name, role, until } = spoken
   return {

@@ -25,6 +25,8 @@ export interface Site {
   /** Wet floors are to be reckoned with here; and not at patches alone. */
   wetApplies: boolean
   wetAround: boolean
+  /** Somebody said so; else it is reckoned with because nobody said of the zone that it is not. */
+  wetSaid: boolean
   /** Judged with a wet floor this time. */
   wet: boolean
 }
@@ -57,12 +59,15 @@ export function siteOf(setting: Setting, walk: Walk, index: number, wet: boolean
   const zone = setting.view.zones.find((one) => one.id === segment.zone) ?? null
   const around = withNoiseOf(setting, zone ? surroundingsOf(setting, zone) : nobody, segment)
   const patch = segment.features.some((one) => one.kind === 'wet-patch' || one.kind === 'loose-ground')
-  const wetAround =
+  const mopped = zone?.words.mopped?.says ?? null
+  const wetZone =
     segment.words.wetness?.says === 'wet' ||
-    // What nobody said of the zone is reckoned wet.
-    zone?.outdoors !== false ||
-    zone?.nearOutsideDoor !== false ||
-    zone?.words.mopped?.says !== 'no'
+    zone?.outdoors === true ||
+    zone?.nearOutsideDoor === true ||
+    (mopped !== null && mopped !== 'no')
+  // What nobody said of the zone is reckoned wet.
+  const wetAround = wetZone || zone?.outdoors !== false || zone.nearOutsideDoor !== false || mopped === null
+  const wetSaid = patch || wetZone
   const wetApplies = patch || wetAround
   return {
     setting,
@@ -73,6 +78,7 @@ export function siteOf(setting: Setting, walk: Walk, index: number, wet: boolean
     zone,
     around,
     wetAround,
+    wetSaid,
     wetApplies,
     reaction: reaction(setting.team, around),
     outdoors: zone?.outdoors === true,

@@ -48,9 +48,12 @@ export function stale(site: Site): Gap[] {
       for (const one of readings) look(one.time, row.staleDays, what(attribute), row.harm, [one.id])
   }
   if (!led || !zone) return found
-  for (const one of zone.observations)
-    for (const item of ['crowd', 'noise'])
+  for (const one of site.around.seen) {
+    for (const item of ['crowd', 'noise', 'flow'])
       look(one.words[item]?.time, peopleDays, () => `${zone.name}: ${item}`, 'road')
+    for (const meter of one.readings.noise ?? [])
+      look(meter.time, peopleDays, () => `${zone.name}: noise`, 'comfort', [meter.id])
+  }
   return found
 }
 

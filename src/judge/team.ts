@@ -25,7 +25,8 @@ const bounce: Metres = 0.02
 const bagBeside: Metres = 0.1
 const bagInFront: Metres = 0.15
 
-export function teamOf(card: TeamCard): Team {
+export function teamOf(given: TeamCard): Team {
+  const card = { ...given, handler: { ...given.handler, ...shownOf(given.handler) } }
   const { robot, handler, leash } = card
   const breadth = handler.shoulders + handler.clothing + (handler.bag === 'beside' ? bagBeside : 0)
   const bag = handler.bag === 'in-front' ? bagInFront : 0
@@ -51,6 +52,12 @@ export function teamOf(card: TeamCard): Team {
   }
   const lengths = [...new Set(leash.lengths)].sort((a, b) => a - b)
   return { ...team, lengths: lengths.filter((length) => (leastSeparation(team, length, 0) ?? 0) >= apart - 1e-9) }
+}
+
+/** What was shown to nobody by name was not shown. */
+function shownOf({ standsWhenSlack: stands, ownWayThroughLifts: lifts }: TeamCard['handler']) {
+  const named = (one: typeof stands) => (one?.name.trim() ? one : null)
+  return { standsWhenSlack: named(stands), ownWayThroughLifts: named(lifts) }
 }
 
 /**

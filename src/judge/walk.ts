@@ -54,7 +54,7 @@ export function* judgeWalk(
       ladder: team.lengths.map((one) => ladderCell(standing.judged, one)),
       retakes: retakesOf(setting, walk, index, standing, rooms),
     }
-    segments.push(overridden(result, walk.overrides ?? [], setting, leash))
+    segments.push(overridden(result, walk.overrides ?? [], setting, standing.judged.site.segment))
     progress.done++
   }
   return walkResult(setting, walk, segments, judged, stretches, pace)
@@ -76,8 +76,8 @@ function shownAt(
   if (leash === null || pace === null) return { judged, at: own, says: [] }
   const offered = judged.grid.pairs.some((one) => one.leash === leash)
   if (offered && holds(pairOf(judged.pairs, leash, pace))) return { judged, at: { leash, pace }, says: [] }
-  // A leash that cannot be changed is the walk's on every part.
-  if (!changeable && judged.choice !== null && offered) {
+  // A leash that cannot be changed is the walk's on every part, also where it is not on offer.
+  if (!changeable && judged.choice !== null) {
     const alone = restrict(judged, leash)
     return { judged: alone, at: ownPair(alone), says: [] }
   }

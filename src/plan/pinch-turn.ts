@@ -11,19 +11,24 @@ const square = Math.PI / 2
 /** What a corner measured square by 3-4-5 or plan may cost, measured on corners of 1.0 to 1.5 m. */
 const squareCost: Metres = 0.003
 
-/** A turn through a door in the side wall is the door's: the same hand, about square. */
+/** How near the end of its part a side door stands that makes the turn there. */
+const doorAtEnd: Metres = 1
+
+/** A turn through a door in the side wall is the door's: the same hand, about square, and at the part's end. */
 export function isThroughDoor(segment: Segment, turn: Feature, read: Read): boolean {
   const angle = read(turn, 'angle', 'both')?.value
   if (angle === undefined || Math.abs(angle) < Math.PI / 3 || Math.abs(angle) > (Math.PI * 2) / 3) return false
   const hand = angle > 0 ? 'left' : 'right'
-  return segment.features.some((one) => framed.has(one.kind) && one.words.position?.says === hand)
+  const end = read(segment, 'length', 'low')?.value
+  const isHere = ({ along }: Feature) => along === undefined || end === undefined || end - along <= doorAtEnd
+  return segment.features.some((one) => framed.has(one.kind) && one.words.position?.says === hand && isHere(one))
 }
 
 /** A turn or U-turn at the end of its segment; null where it asks no corner. */
 export function ofTurn(site: PinchSite, turn: Feature): Pinch | Lacking | null {
   const { read, segment, after } = site
-  // Turning to face something at the end of a walk asks no corner; going round a wall end does.
-  if (!after && turn.kind === 'turn') return null
+  // Turning to face something at the end of a walk asks no corner; going round a wall end or into a way measured does.
+  if (!after && turn.kind === 'turn' && !turn.readings.widthAfter) return null
   const before = read(turn, 'widthBefore', 'low') ?? read(segment, 'width', 'low')
   const past = read(turn, 'widthAfter', 'low') ?? (after ? read(after, 'width', 'low') : null)
   if (!before) return { feature: turn, lacking: 'clear width before the corner' }

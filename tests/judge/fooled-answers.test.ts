@@ -60,6 +60,14 @@ describe('surroundings', () => {
     expect(judged(stretch(), { zone: place }).conditions).toContain('dry floor only')
   })
 
+  test('what nobody said of the zone turns nothing into do-not-use', () => {
+    const { outdoors, ...rest } = zone()
+    const open = stretch()
+    delete open.words.sensing
+    expect(judged(open, { zone: rest }).verdict).toBe('not-known')
+    expect(judged({ ...stretch(), zone: 'none' }).verdict).toBe('not-known')
+  })
+
   test('nobody answered whether a strong magnet is near', () => {
     const place = zone()
     delete place.words.magnet

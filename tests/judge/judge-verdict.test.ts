@@ -242,7 +242,12 @@ describe('overrides', () => {
     until: '2026-12-31',
   }
   const of = (segment: Segment, more: object = {}) =>
-    judgedWalk([segment], {}, { overrides: [{ ...spoken, segment: segment.id, ...more }] }).segments[0]
+    judgedWalk([segment], {}, { overrides: [{ ...spoken, ...own(segment), segment: segment.id, ...more }] }).segments[0]
+  // Of this team, and of the leash that the part is judged with.
+  const own = (segment: Segment) => {
+    const leash = judged(segment).checks.find((one) => one.at !== null)?.at?.leash
+    return { team: '1', ...(leash === undefined ? {} : { leash }) }
+  }
   const narrow = () => stretch({ readings: { width: [reading(0.9)] } })
   test("whole, in date and for this team it speaks, and the machine's word is kept", () => {
     expect(of(narrow())?.verdict).toBe('usable')

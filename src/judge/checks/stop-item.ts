@@ -1,5 +1,7 @@
 import { kind } from '../../catalogue/kinds.ts'
+import type { Feature } from '../../record/survey.ts'
 import { type Finding, finding } from '../finding.ts'
+import { type HelpState, helpState } from '../help.ts'
 import { helpAt, helpLedOtherwise, nameOf, type Site } from '../site.ts'
 
 /**
@@ -10,12 +12,15 @@ export function stopItem(site: Site): Finding[] {
   const { segment, zone } = site
   const found = segment.features
     .filter((feature) => kind(feature.kind)?.stopItem)
-    .map((feature) =>
-      judged(feature.id, nameOf(feature), kind(feature.kind)?.harm ?? 'fall', helpLedOtherwise(site, feature)),
-    )
+    .map((feature) => judged(feature.id, nameOf(feature), kind(feature.kind)?.harm ?? 'fall', helpPast(site, feature)))
   const magnet = zone?.words.magnet?.says === 'yes' && !segment.features.some((one) => one.kind === 'magnet-area')
   if (magnet) found.push(judged(segment.id, 'magnet area', 'trap', site.led ? undefined : helpAt(site)))
   return found
+}
+
+/** On a robot-led part where nobody said who leads past it, help of the part for something else leads nobody. */
+function helpPast(site: Site, feature: Feature): HelpState | undefined {
+  return site.led && feature.ledBy === undefined ? helpState(feature.help) : helpLedOtherwise(site, feature)
 }
 
 function judged(

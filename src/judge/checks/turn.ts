@@ -1,5 +1,6 @@
 import { kind } from '../../catalogue/kinds.ts'
 import type { Lacking, Pinch, PinchSite } from '../../plan/pinch.ts'
+import type { Feature } from '../../record/survey.ts'
 import { epsilon, type Finding, finding, ratioOf, roomState } from '../finding.ts'
 import type { Room, RoomSolver, Rooms } from '../rooms.ts'
 import { read } from '../setting.ts'
@@ -166,17 +167,36 @@ function subjectOf({ segment }: Site, { feature }: Pinch): string {
   return feature === segment.turn && !feature.name ? `Turn at the end of ${segment.name}` : `Room at ${nameOf(feature)}`
 }
 
-/** Whether a planned slack pause may be counted at this pinch. */
-function mayPause({ setting, segment, around, length }: Site, { feature }: Pinch): boolean {
+/** Whether a planned slack pause may be counted at this pinch; what stands on the parts before and after counts too. */
+function mayPause({ setting, segment, before, after, around, length }: Site, { feature }: Pinch): boolean {
   if (setting.team.card.handler.standsWhenSlack === null) return false
   if ((around.crowd ?? 3) >= 2 && around.twoWay) return false
-  if (segment.features.some((one) => one.kind === 'ramp')) return false
-  const at = feature === segment.turn ? length?.value : feature.along
-  return !segment.features.some((one) => {
-    if (one === feature) return one.kind === 'lift'
-    if (!isEdge(one) && one.kind !== 'lift' && kind(one.kind)?.harm !== 'fall') return false
-    // An edge runs beside the whole stretch; where a thing stands is not known, it is near.
-    if (isEdge(one) || at === undefined || one.along === undefined) return true
-    return Math.abs(one.along - at) < apartFromHarm - epsilon
-  })
+  if (feature.kind === 'lift' || segment.features.some((one) => one.kind === 'ramp')) return false
+  const end = length?.low
+  const at = feature === segment.turn ? end : feature.along
+  const gone = before ? read(setting, before, 'length', 'low')?.high : 0
+  const parts = [
+    { features: segment.features, start: 0, apart: 0 },
+    { features: before?.features ?? [], start: gone === undefined ? undefined : -gone, apart: at },
+    {
+      features: after?.features ?? [],
+      start: end,
+      apart: at === undefined || end === undefined ? undefined : end - at,
+    },
+  ]
+  return !parts.some(({ features, start, apart }) =>
+    features.some((one) => {
+      if (one === feature || !isHarm(one)) return false
+      // Where a thing stands is not known, it is near; an edge or a ramp runs beside its whole part.
+      const along = isEdge(one) || one.kind === 'ramp' ? undefined : one.along
+      const off =
+        along === undefined || start === undefined || at === undefined ? (apart ?? 0) : Math.abs(start + along - at)
+      return off < apartFromHarm - epsilon
+    }),
+  )
+}
+
+/** Stairs and whatever else one falls at, edges, lifts, stop items. */
+function isHarm(one: Feature): boolean {
+  return isEdge(one) || one.kind === 'lift' || kind(one.kind)?.harm === 'fall' || kind(one.kind)?.stopItem === true
 }
