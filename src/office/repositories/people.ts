@@ -133,11 +133,13 @@ export async function callerOf(db: Kysely<Tables>, token: string): Promise<Calle
   return { account: row.account, name: row.name, role: row.role as Role, branch: row.branch, device: row.device }
 }
 
+/** Notes that the device was heard of, once a minute at most: every note is a write to the disk. */
 export async function seen(db: Kysely<Tables>, device: string, now: number): Promise<void> {
   await db
     .updateTable('devices')
     .set({ seen_at: isoOf(now) })
     .where('device', '=', device)
+    .where((eb) => eb.or([eb('seen_at', 'is', null), eb('seen_at', '<', isoOf(now - 60_000))]))
     .execute()
 }
 

@@ -1,7 +1,8 @@
 import { join } from 'node:path'
-import { Kysely, PostgresDialect, SqliteDialect } from 'kysely'
+import { Kysely, PostgresDialect } from 'kysely'
 import Libsql from 'libsql'
 import pg from 'pg'
+import { inTurn } from './in-turn.ts'
 import { lockFolder } from './lock-file.ts'
 import { migrate } from './migrate.ts'
 import type { Tables } from './tables.ts'
@@ -29,7 +30,7 @@ function openSqlite(folder: string): Opened {
   const file = new Libsql(join(folder, 'office.sqlite'))
   // Every commit is on the disk before anybody is told.
   for (const pragma of ['journal_mode = WAL', 'synchronous = FULL', 'busy_timeout = 5000']) file.pragma(pragma)
-  const db = new Kysely<Tables>({ dialect: new SqliteDialect({ database: file }) })
+  const db = new Kysely<Tables>({ dialect: inTurn(file) })
   return {
     db,
     engine: 'sqlite',
