@@ -19,14 +19,28 @@ export function pointToSegment(px: number, py: number, x0: number, y0: number, x
 /**
  * Distance between a segment and the boundary; 0 where it touches or crosses a wall. With both ends in the free
  * region a positive value means that the whole segment lies in it.
+ *
+ * @param enough any value at or above this may stand for a greater distance (a cap that saves time)
  */
-export function segmentToBoundary(walls: Boundary, x0: number, y0: number, x1: number, y1: number): Metres {
-  let best = Number.POSITIVE_INFINITY
+export function segmentToBoundary(
+  walls: Boundary,
+  x0: number,
+  y0: number,
+  x1: number,
+  y1: number,
+  enough: Metres = Number.POSITIVE_INFINITY,
+): Metres {
+  let best = enough
+  const half = lengthOf(x1 - x0, y1 - y0) / 2
+  const mx = (x0 + x1) / 2
+  const my = (y0 + y1) / 2
   for (let i = 0; i < walls.count; i++) {
     const ex0 = walls.x0[i] as number
     const ey0 = walls.y0[i] as number
     const ex1 = walls.x1[i] as number
     const ey1 = walls.y1[i] as number
+    // No point of the segment is nearer than its middle is, less half its length.
+    if (pointToSegment(mx, my, ex0, ey0, ex1, ey1) - half >= best) continue
     const side0 = (x1 - x0) * (ey0 - y0) - (y1 - y0) * (ex0 - x0)
     const side1 = (x1 - x0) * (ey1 - y0) - (y1 - y0) * (ex1 - x0)
     const nx = walls.nx[i] as number

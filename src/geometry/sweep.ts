@@ -3,8 +3,16 @@ import type { Boundary } from './boundary.ts'
 import { pointToSegment, segmentToBoundary } from './segment.ts'
 
 /** Clearance of a disc that moves straight from one place to another, both inside; 0 less its radius where the way crosses a wall. */
-export function discSweepClearance(walls: Boundary, x0: Metres, y0: Metres, x1: Metres, y1: Metres, r: Metres): Metres {
-  return segmentToBoundary(walls, x0, y0, x1, y1) - r
+export function discSweepClearance(
+  walls: Boundary,
+  x0: Metres,
+  y0: Metres,
+  x1: Metres,
+  y1: Metres,
+  r: Metres,
+  enough: Metres = Number.POSITIVE_INFINITY,
+): Metres {
+  return segmentToBoundary(walls, x0, y0, x1, y1, enough + r) - r
 }
 
 /**
@@ -22,14 +30,15 @@ export function rectangleSweepClearance(
   sin: number,
   half: Metres,
   side: Metres,
+  enough: Metres = Number.POSITIVE_INFINITY,
 ): Metres {
-  let best = Number.POSITIVE_INFINITY
+  let best = enough
   for (let corner = 0; corner < 4; corner++) {
     const along = corner & 1 ? half : -half
     const left = corner & 2 ? side : -side
     const dx = along * cos - left * sin
     const dy = along * sin + left * cos
-    best = Math.min(best, segmentToBoundary(walls, x0 + dx, y0 + dy, x1 + dx, y1 + dy))
+    best = Math.min(best, segmentToBoundary(walls, x0 + dx, y0 + dy, x1 + dx, y1 + dy, best))
   }
   for (let i = 0; i < walls.count; i++) {
     if (!walls.reflex[i]) continue

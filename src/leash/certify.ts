@@ -130,10 +130,24 @@ export function centreY(bodies: Bodies, node: Node): Metres {
 }
 
 /** Robot's clearance of a pose. */
-export function robotClearance(walls: Boundary, bodies: Bodies, node: Node): Metres {
+export function robotClearance(
+  walls: Boundary,
+  bodies: Bodies,
+  node: Node,
+  enough: Metres = Number.POSITIVE_INFINITY,
+): Metres {
   const cos = Math.cos(node.heading)
   const sin = Math.sin(node.heading)
-  return rectangleClearance(walls, centreX(bodies, node), centreY(bodies, node), cos, sin, bodies.a / 2, bodies.b / 2)
+  return rectangleClearance(
+    walls,
+    centreX(bodies, node),
+    centreY(bodies, node),
+    cos,
+    sin,
+    bodies.a / 2,
+    bodies.b / 2,
+    enough,
+  )
 }
 
 /** Distance kept between the bodies, less the least they must keep; a slack handler drifts along the leash. */
@@ -158,10 +172,13 @@ export function apart(bodies: Bodies, node: Node, drift: Metres): Metres {
   return least - bodies.r - bodies.g
 }
 
+/** Leash clearances and clearances above the least by this need no exact value, metres: far above any remainder. */
+const plenty = 0.05
+
 function leashClearance(walls: Boundary, node: Node): Metres {
   const x = node.x + node.length * Math.cos(node.psi)
   const y = node.y + node.length * Math.sin(node.psi)
-  return segmentToBoundary(walls, node.x, node.y, x, y)
+  return segmentToBoundary(walls, node.x, node.y, x, y, plenty)
 }
 
 function handlerClearance(walls: Boundary, bodies: Bodies, node: Node, drift: Metres): Metres {
@@ -180,24 +197,29 @@ interface Margins {
   apart: Metres
 }
 
+function marginsOf(walls: Boundary, bodies: Bodies, node: Node, drift: Metres, enough: Metres): Margins {
+  return {
+    robot: robotClearance(walls, bodies, node, enough),
+    handler: handlerClearance(walls, bodies, node, drift),
+    leash: leashClearance(walls, node),
+    apart: apart(bodies, node, drift),
+  }
+}
+
 function measure(walls: Boundary, bodies: Bodies, nodes: Node[], drift: Metres, worth: Certificate): void {
   const reach = reachOf(bodies)
-  const margins = nodes.map(
-    (node): Margins => ({
-      robot: robotClearance(walls, bodies, node),
-      handler: handlerClearance(walls, bodies, node, drift),
-      leash: leashClearance(walls, node),
-      apart: apart(bodies, node, drift),
-    }),
-  )
   let least = Number.POSITIVE_INFINITY
-  for (const [k, margin] of margins.entries())
+  const margins: Margins[] = []
+  for (const [k, node] of nodes.entries()) {
+    const margin = marginsOf(walls, bodies, node, drift, least + plenty)
+    margins.push(margin)
     for (const body of ['robot', 'handler'] as const)
       if (margin[body] < least) {
         least = margin[body]
         worth.at = k
         worth.body = body
       }
+  }
   // The samples alone say `least`; what lies between may be lower by the remainder, which refinement keeps small.
   let certified = least
   const visit = (from: Node, to: Node, a: Margins, b: Margins): void => {
@@ -220,12 +242,7 @@ function measure(walls: Boundary, bodies: Bodies, nodes: Node[], drift: Metres, 
     }
     const middle = between(from, to, 0.5)
     middle.slack = from.slack || to.slack
-    const m: Margins = {
-      robot: robotClearance(walls, bodies, middle),
-      handler: handlerClearance(walls, bodies, middle, drift),
-      leash: leashClearance(walls, middle),
-      apart: apart(bodies, middle, drift),
-    }
+    const m = marginsOf(walls, bodies, middle, drift, least + plenty)
     visit(from, middle, a, m)
     visit(middle, to, m, b)
   }
@@ -259,6 +276,7 @@ function robotBetween(
     Math.sin(from.heading),
     bodies.a / 2,
     bodies.b / 2,
+    target + plenty,
   )
   return Math.max(bound, swept - sagitta)
 }
@@ -285,5 +303,5 @@ function handlerBetween(
   if (pull === 0) return Math.min(a.handler, b.handler)
   if (bound >= target || Math.min(a.handler, b.handler) <= -bodies.r) return bound
   const sagitta = (pull * turn) / 4
-  return Math.max(bound, discSweepClearance(walls, from.x, from.y, to.x, to.y, bodies.r) - sagitta)
+  return Math.max(bound, discSweepClearance(walls, from.x, from.y, to.x, to.y, bodies.r, target + plenty) - sagitta)
 }

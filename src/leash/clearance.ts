@@ -22,7 +22,7 @@ import { mostPauses, type SlackResult, searchSlack } from './slack.ts'
 import { type Tables, tablesOf } from './tables.ts'
 import { checkQuestion } from './team.ts'
 import { tightestOf } from './tightest.ts'
-import { closedTurn, closedTurnNodes, hasClosedTurn } from './turn.ts'
+import { closedTurn, closedTurnNodes, hasClosedTurn, isBoundedTurn } from './turn.ts'
 
 /** A motion this near to what the closed form allows is not searched for further, metres. */
 const closeEnough = 0.02
@@ -41,16 +41,18 @@ export const clearance: Planner = (scene, bodies, separation, options = {}) => {
   if (free < 0) return nothing(free, true)
   const form = scene.form
   let high = free
-  if (form?.kind === 'turn' && hasClosedTurn(form, bodies)) {
+  if (form?.kind === 'turn' && isBoundedTurn(form, bodies)) {
     high = Math.min(free, closedTurn(form, bodies, separation) + closedMargin)
     if (high < 0) return nothing(high, true)
   }
   const passes = { left: options.workCap ?? usualCap }
-  const tables = tablesFor(scene, bodies)
   const quest: Quest = {
     scene,
     walls,
-    tables,
+    // Only a search asks for them, and pays for them.
+    get tables() {
+      return tablesFor(scene, bodies)
+    },
     bodies,
     separation,
     phi: freeAngle(bodies, separation),

@@ -17,12 +17,12 @@ const pace = 0.03
  * A hair above 90 degrees is 90 after conversion.
  */
 export function hasClosedTurn(form: Turn, bodies: Bodies): boolean {
-  return (
-    form.angle <= Math.PI / 2 + 1e-9 &&
-    bodies.sideways &&
-    bodies.phiMax >= Math.PI / 2 - 1e-9 &&
-    bodies.r >= bodies.a / 2 - bodies.d - 1e-12
-  )
+  return isBoundedTurn(form, bodies) && bodies.sideways && bodies.phiMax >= Math.PI / 2 - 1e-9
+}
+
+/** Whether the closed form is at least a bound: wheels and a leash that must pull from behind only take freedom away. */
+export function isBoundedTurn(form: Turn, bodies: Bodies): boolean {
+  return form.angle <= Math.PI / 2 + 1e-9 && bodies.r >= bodies.a / 2 - bodies.d - 1e-12
 }
 
 /**
