@@ -8,6 +8,7 @@ import { appendFacts, factsAfter, type Saved, seenOf, type TakenIn, takeInFacts 
 import { clearMemo, keepMemo, readMemo, readWholeMemo } from './memo.ts'
 import { forgetOffice, recall, remember } from './office.ts'
 import { keepPhoto, readPhoto } from './photos.ts'
+import { reissue } from './reissue.ts'
 import { changeSettings, deviceId, readSettings, renewDeviceId, type Settings } from './settings.ts'
 import { catchUp, openLog } from './snapshots.ts'
 import { askToPersist, type StorageState, storageState } from './storage-state.ts'
@@ -18,7 +19,11 @@ import type { Trouble } from './trouble.ts'
 export interface Store {
   /** This phone's id in facts. */
   device(): string
-  renewDevice(): Promise<string>
+  /**
+   * Parts this phone from its copy: what `from` wrote in the survey from number `first` on goes under an id that only this
+   * phone has. Load the page again afterwards.
+   */
+  partFromCopy(survey: string, from: string, first: number): Promise<{ saved: true; facts: number } | Trouble>
   /** Lines of the list of venues, the last changed first. */
   surveys(): Promise<SurveyRow[]>
   openSurvey(survey: string): Promise<FactLog>
@@ -74,7 +79,10 @@ export async function openStore(name = 'tautline'): Promise<Opened> {
     }
     const store: Store = {
       device: () => device,
-      renewDevice: async () => (device = await renewDeviceId(database)),
+      async partFromCopy(survey, from, first) {
+        if (device === from) device = await renewDeviceId(database)
+        return reissue(database, survey, { from, first, to: device })
+      },
       surveys: async () =>
         (await database.getAll('surveys')).sort((a, b) => (a.changed < b.changed ? 1 : a.changed > b.changed ? -1 : 0)),
       openSurvey: (survey) => openLog(database, survey, device),

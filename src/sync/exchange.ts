@@ -16,14 +16,13 @@ export type Exchanged =
   | { ok: true; sent: number; got: number; at: string }
   | {
       ok: false
-      /**
-       * `later`: no answer, try again by itself. `signed-out`: the office ended this phone's token. `copied`: another phone
-       * wrote under this one's id. `refused`: a person has to see to it.
-       */
-      kind: 'later' | 'signed-out' | 'copied' | 'refused'
+      /** `later`: no answer, try again by itself. `signed-out`: the office ended this phone's token. `refused`: a person has to see to it. */
+      kind: 'later' | 'signed-out' | 'refused'
       what: string
       whatToDo: string
     }
+  /** Another phone wrote other entries under the same numbers: from `first` of `device` on, as far as the office saw. */
+  | { ok: false; kind: 'copied'; what: string; whatToDo: string; device: string; first: number }
 
 /**
  * Exchanges one survey with the office by difference, page by page, until neither lacks anything. Cut at any point, the next
@@ -60,7 +59,10 @@ export async function exchangeSurvey(
         ack = { ...ack, [refusal.device]: refusal.next - 1 }
         continue
       }
-      return { ok: false, kind: kindOf(refusal.error), what: refusal.what, whatToDo: refusal.whatToDo }
+      const { error, what, whatToDo, device, next } = refusal
+      if (error === 'fork' && device !== undefined && next !== undefined)
+        return { ok: false, kind: 'copied', what, whatToDo, device, first: next }
+      return { ok: false, kind: isSignedOut(error) ? 'signed-out' : 'refused', what, whatToDo }
     }
     const { body } = reply
     const fault = faultOf(survey, body)
@@ -107,7 +109,6 @@ function isFurther(now: Have, before: Have): boolean {
   return Object.entries(now).some(([device, n]) => n > numberIn(before, device))
 }
 
-function kindOf(error: string): 'signed-out' | 'copied' | 'refused' {
-  if (error === 'revoked' || error === 'token' || error === 'no-token') return 'signed-out'
-  return error === 'fork' ? 'copied' : 'refused'
+function isSignedOut(error: string): boolean {
+  return error === 'revoked' || error === 'token' || error === 'no-token'
 }

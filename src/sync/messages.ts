@@ -60,7 +60,7 @@ export interface OfficeRefusal {
   error: string
   what: string
   whatToDo: string
-  /** For `gap`: the device, and the number that the office waits for. */
+  /** For `gap`: the device, and the number that the office waits for. For `fork`: the number that two phones wrote. */
   device?: string
   next?: number
 }

@@ -6,7 +6,8 @@ import type { PhoneStore } from '../../src/sync/client.ts'
 /** A whole small office: what it holds, and what it says to each path. */
 class FakeOffice {
   readonly held: Fact[] = []
-  refusal: { status: number; error: string; what: string; whatToDo: string } | null = null
+  refusal: { status: number; error: string; what: string; whatToDo: string; device?: string; next?: number } | null =
+    null
   silent = false
   /** Called on each exchange before it is answered. */
   onAsk: () => void = () => undefined
@@ -203,19 +204,18 @@ describe('a phone at its office', () => {
   })
 
   test.each([
-    ['fork', 409, true],
-    ['not-found', 404, false],
-    ['app-too-old', 426, false],
-    ['gap', 409, false],
+    ['not-found', 404],
+    ['app-too-old', 426],
+    ['gap', 409],
   ])(
     'a survey refused by "%s" says what and what to do, and is free again once it got through',
-    async (error, status, copied) => {
+    async (error, status) => {
       const { work, facts } = await enrolled([fact('s', 'a', 1)])
       facts.push(fact('s', 'a', 2))
       office.refusal = { status, error, what: 'It will not do.', whatToDo: 'Do this.' }
       work.send('all')
       await settled(work)
-      expect(work.stuck.value.get('s')).toEqual({ what: 'It will not do.', whatToDo: 'Do this.', copied })
+      expect(work.stuck.value.get('s')).toEqual({ what: 'It will not do.', whatToDo: 'Do this.', copied: null })
       expect(work.said.value?.failed).toBe(true)
       office.refusal = null
       work.send('all')
@@ -224,6 +224,18 @@ describe('a phone at its office', () => {
       expect(work.where.value.get('s')?.where).toBe('office')
     },
   )
+
+  test('a copied phone is told, with where the two part, and that nothing is lost', async () => {
+    const { work, facts } = await enrolled([fact('s', 'a', 1)])
+    facts.push(fact('s', 'a', 2))
+    office.refusal = { status: 409, error: 'fork', what: '-', whatToDo: '-', device: 'a', next: 2 }
+    work.send('all')
+    await settled(work)
+    expect(work.stuck.value.get('s')).toMatchObject({
+      what: expect.stringContaining('Nothing is lost'),
+      copied: { device: 'a', first: 2 },
+    })
+  })
 
   test('an answer that is no record is not taken in', async () => {
     const { work, facts } = await enrolled([fact('s', 'a', 1)])

@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs'
 import { expect, type Page, test } from '@playwright/test'
+import type { Fact } from '../../src/record/facts.ts'
 import { axeFinds } from './axe.ts'
 import { OfficeServer } from './office-server.ts'
 import { AppServer, OutsideWall, Phone } from './phone.ts'
@@ -143,6 +144,34 @@ test('two phones at one office: recorded apart without a network, both have ever
           await expect(dispute).toContainText('Ana Pell says “yes, all along”')
           await expect(dispute).toContainText('Ben Ode says “none on a part of it”')
         }
+      })
+
+      await test.step('a copied phone is told, and both copies are kept', async () => {
+        await office.stop()
+        await newWalk(a, 'Stage', 'Foyer')
+        const survey = /venue\/([^/]+)/.exec(a.url())?.[1] ?? ''
+        await a.goto('about:blank')
+        await office.start()
+        const held = async (): Promise<Fact[]> => (await office.ask('GET', `/api/surveys/${survey}/file`)).facts
+        const own = (await held()).filter(({ person }) => person === 'Ana Pell')
+        const last = own.at(-1) as Fact
+        // The other copy went on under the same id, and was at the office first.
+        const other = {
+          ...last,
+          n: Math.max(...own.map(({ n }) => n)) + 1,
+          field: 'note',
+          value: 'by the copy',
+          replaces: [],
+        }
+        await office.ask('POST', `/api/surveys/${survey}/sync`, { protocol: 1, have: {}, facts: [other] })
+
+        await a.goto(`${office.address}/sync`)
+        await expect(whereIs(a, 'Reed House')).toContainText('Nothing is lost. Keep both')
+        await a.getByRole('button', { name: 'Keep both' }).click()
+        await expect(whereIs(a, 'Reed House')).toContainText(/^Reed HouseAt the office, [^.]*\.$/)
+        const after = await held()
+        expect(after).toContainEqual(other)
+        expect(after.some(({ value }) => value === 'Stage to Foyer')).toBe(true)
       })
 
       await test.step('a revoked phone is told, loses nothing, and records on', async () => {

@@ -133,7 +133,6 @@ describe('an exchange', () => {
 
   test.each([
     ['revoked', 401, 'signed-out'],
-    ['fork', 409, 'copied'],
     ['erased', 410, 'refused'],
     ['app-too-old', 426, 'refused'],
     ['office', 500, 'later'],
@@ -142,6 +141,25 @@ describe('an exchange', () => {
     const { store } = phone([fact('a', 1)])
     expect(await exchangeSurvey(line(no(status, error)), store, 's', now)).toMatchObject({ ok: false, kind })
     expect((await whereabouts(store, 's')).where).not.toBe('office')
+  })
+
+  test('two phones under one id: told where they part', async () => {
+    const { store } = phone([fact('a', 1), fact('a', 2)])
+    const office = line(no(409, 'fork', { device: 'a', next: 2 }))
+    expect(await exchangeSurvey(office, store, 's', now)).toMatchObject({ kind: 'copied', device: 'a', first: 2 })
+  })
+
+  test.each([
+    ['no record', { ack: { a: 1 }, facts: [{ ...fact('b', 1), n: 'one' }], more: false, at: now() }],
+    ['of another survey', { ack: { a: 1 }, facts: [{ ...fact('b', 1), survey: 'other' }], more: false, at: now() }],
+    ['without facts', { ack: { a: 1 }, more: false, at: now() }],
+    ['with a mark that is no number', { ack: { a: '9' }, facts: [], more: false, at: now() }],
+  ])('an answer %s is refused whole and believed in nothing', async (_what, body) => {
+    const { log, store } = phone([fact('a', 1)])
+    const ended = await exchangeSurvey(line({ status: 200, body }), store, 's', now)
+    expect(ended).toMatchObject({ ok: false, kind: 'refused' })
+    expect(allFacts(log)).toHaveLength(1)
+    expect((await whereabouts(store, 's')).where).toBe('sent')
   })
 
   test('an office that takes nothing and says nothing against it is tried later, not for ever', async () => {

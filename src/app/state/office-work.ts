@@ -37,9 +37,15 @@ export interface Told {
   whatToDo: string
 }
 
-/** A survey that did not get through. `copied`: another phone writes under this one's id. */
+/** Where two phones wrote under one id: from `first` of `device` on. */
+export interface Copied {
+  device: string
+  first: number
+}
+
+/** A survey that did not get through. */
 export interface Stuck extends Told {
-  copied: boolean
+  copied: Copied | null
 }
 
 export interface Under {
@@ -238,17 +244,25 @@ export function officeWork(phone: Phone): OfficeWork {
     async signOut() {
       const office = enrolment.value
       stop.abort()
-      const told = office
-        ? await signOut(lineOf(office.address, office.token, new AbortController().signal))
-        : { ok: false }
+      // One that the office has signed out already need not be told of.
+      const told =
+        !office ||
+        office.ended !== null ||
+        (await signOut(lineOf(office.address, office.token, new AbortController().signal))).ok
       await phone.forgetOffice()
       enrolment.value = null
       stuck.value = new Map()
-      said.value = null
+      said.value = told ? null : notTold
       await look()
-      return told.ok
+      return told
     },
   }
+}
+
+const notTold = {
+  what: 'Signed out on this phone; the office could not be told.',
+  whatToDo: 'Ask the administrator to end this phone’s access.',
+  failed: true,
 }
 
 const stopped = {
@@ -261,14 +275,20 @@ function stuckAfter(before: ReadonlyMap<string, Stuck>, results: readonly Survey
   const after = new Map(before)
   for (const { survey, entries, photos } of results) {
     after.delete(survey)
-    if (!entries.ok && (entries.kind === 'copied' || entries.kind === 'refused'))
-      after.set(survey, { what: entries.what, whatToDo: entries.whatToDo, copied: entries.kind === 'copied' })
+    if (!entries.ok && entries.kind === 'refused')
+      after.set(survey, { what: entries.what, whatToDo: entries.whatToDo, copied: null })
+    if (!entries.ok && entries.kind === 'copied')
+      after.set(survey, {
+        what: `This phone is a copy of another, or the other of this: both wrote entry ${entries.first} and on. Nothing is lost.`,
+        whatToDo: 'Keep both: this phone’s entries then stand beside the other’s, and go to the office.',
+        copied: { device: entries.device, first: entries.first },
+      })
     const refused = photos?.refused[0]
     if (refused)
       after.set(survey, {
         what: `${photos.refused.length === 1 ? 'A photo was' : `${photos.refused.length} photos were`} not taken: ${refused.what}`,
         whatToDo: 'It stays on this phone: make a back-up, and take the photo again.',
-        copied: false,
+        copied: null,
       })
   }
   return after
@@ -279,7 +299,9 @@ function outcome(results: readonly SurveySynced[], stuck: number): Told & { fail
   if (failed && !failed.entries.ok)
     return { what: failed.entries.what, whatToDo: failed.entries.whatToDo, failed: failed.entries.kind !== 'later' }
   const sum = (of: 'sent' | 'got') => results.reduce((all, { entries }) => all + (entries.ok ? entries[of] : 0), 0)
-  const what = `Exchanged: ${counted(sum('sent'))} sent, ${counted(sum('got'))} got.`
+  const [sent, got] = [sum('sent'), sum('got')]
+  const what =
+    sent + got === 0 ? 'Nothing new on either side.' : `Exchanged: ${counted(sent)} sent, ${counted(got)} got.`
   if (stuck === 0) return { what, whatToDo: '', failed: false }
   return {
     what,

@@ -5,7 +5,7 @@ import type { Store } from '../../store/open-store.ts'
 import { saysWhere } from '../../sync/client.ts'
 import { dayAndHour } from '../components/day-words.ts'
 import { officeTrouble, surveyIs } from './office-said.ts'
-import { type Enrolment, type OfficeWork, officeWork, type Phone } from './office-work.ts'
+import { type Copied, type Enrolment, type OfficeWork, officeWork, type Phone, type Told } from './office-work.ts'
 import { catchUpSessions } from './open-session.ts'
 import { phoneStore } from './phone.ts'
 import { listSurveys } from './surveys.ts'
@@ -48,10 +48,12 @@ export async function wipePhone(): Promise<void> {
   location.replace('/')
 }
 
-/** A copied phone gets an id of its own; the page begins anew with it. */
-export async function renewIdentity(): Promise<void> {
-  await (await phoneStore()).renewDevice()
+/** Keeps both phones' entries of a survey: this one's go under an id of its own, and the page begins anew with it. */
+export async function keepBoth(survey: string, { device, first }: Copied): Promise<Told | null> {
+  const parted = await (await phoneStore()).partFromCopy(survey, device, first)
+  if (!parted.saved) return parted
   location.reload()
+  return null
 }
 
 function tellFirstPage({ enrolment, where, stuck }: OfficeWork): void {

@@ -2,7 +2,8 @@ import { useState } from 'preact/hooks'
 import { saysWhere } from '../../../sync/client.ts'
 import { BigKey } from '../../components/big-key.tsx'
 import { dayAndHour } from '../../components/day-words.ts'
-import { renewIdentity } from '../../state/office.ts'
+import { StatusLine } from '../../components/status-line.tsx'
+import { keepBoth } from '../../state/office.ts'
 import type { OfficeWork, Stuck } from '../../state/office-work.ts'
 import { surveysOnPhone } from '../../state/surveys.ts'
 
@@ -24,7 +25,7 @@ export function SurveyList({ work }: { work: OfficeWork }) {
               {name || 'Venue without a name'}
             </a>
             <p>{saysWhere(at, dayAndHour)}</p>
-            <HeldUp stuck={work.stuck.value.get(survey)} />
+            <HeldUp survey={survey} stuck={work.stuck.value.get(survey)} />
           </li>
         ))}
       </ul>
@@ -36,27 +37,27 @@ export function SurveyList({ work }: { work: OfficeWork }) {
   )
 }
 
-function HeldUp({ stuck }: { stuck: Stuck | undefined }) {
-  const [asked, setAsked] = useState(false)
+/** What holds a survey up; for a copied phone, the key that keeps what both wrote. */
+function HeldUp({ survey, stuck }: { survey: string; stuck: Stuck | undefined }) {
+  const [refused, setRefused] = useState('')
   if (!stuck) return null
+  const { copied } = stuck
   return (
     <>
       <p class="trouble">
         {stuck.what} {stuck.whatToDo}
       </p>
-      {stuck.copied && !asked && <BigKey press={() => setAsked(true)}>Give this phone a new identity</BigKey>}
-      {stuck.copied && asked && (
-        <>
-          <p>
-            Save the venue as a file first. From then on this phone writes under an id of its own, in every venue. What
-            it wrote before stays as it is.
-          </p>
-          <div class="keys">
-            <BigKey press={() => void renewIdentity()}>New identity now</BigKey>
-            <BigKey press={() => setAsked(false)}>Not now</BigKey>
-          </div>
-        </>
+      {copied && (
+        <BigKey
+          press={async () => {
+            const told = await keepBoth(survey, copied)
+            if (told) setRefused(`${told.what} ${told.whatToDo}`)
+          }}
+        >
+          Keep both
+        </BigKey>
       )}
+      <StatusLine text={refused} failed={refused !== ''} />
     </>
   )
 }

@@ -40,11 +40,17 @@ export function SyncScreen() {
 
 function Parts({ work }: { work: OfficeWork }) {
   const enrolment = work.enrolment.value
+  const said = work.said.value
   if (!enrolment)
     return (
       <div class="columns">
         <section class="part" aria-labelledby="enrol">
           <h2 id="enrol">Enrol this phone</h2>
+          {said && (
+            <p class="trouble" role="alert">
+              {said.what} {said.whatToDo}
+            </p>
+          )}
           <EnrolForm work={work} />
         </section>
         <SurveyList work={work} />
