@@ -28,7 +28,7 @@ export const people: readonly Kind[] = [
     feeds: ['crowd'],
     weight: 'caution',
     harm: 'road',
-    spoken: 'People gather here. Slow. They may cross the leash.',
+    spoken: 'People gather on this part. Slow. They may cross the leash.',
     fix: 'Offer a quiet hour or an escort.',
     unsensed: 'The robot may stand still among people.',
     staleDays: 60,

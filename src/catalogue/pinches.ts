@@ -129,7 +129,7 @@ export const pinches: readonly Kind[] = [
     feeds: ['turn', 'straight-width'],
     weight: 'caution',
     harm: 'trap',
-    spoken: 'Works here. Slow, and listen for the helper.',
+    spoken: 'Works on the way. Slow, and listen for the helper.',
     fix: 'Tell the surveyor before works begin, and fence them with solid boards.',
     unsensed: 'The robot may not know the way as it stands now.',
     staleDays: 0,

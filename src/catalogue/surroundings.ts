@@ -24,7 +24,7 @@ export const surroundings: readonly Kind[] = [
     attributes: [decibels('level', 'level at the ear'), words('what', 'what makes it', null)],
     feeds: ['noise'],
     weight: 'note',
-    spoken: 'Loud here. Feel the leash; expect no speech.',
+    spoken: 'Loud noise. Feel the leash; expect no speech.',
     fix: 'Turn the source down, or offer a quiet hour.',
   },
   {

@@ -47,7 +47,7 @@ export const turns: readonly Kind[] = [
     ],
     weight: 'note',
     harm: 'comfort',
-    spoken: 'End of the way. The robot turns round here.',
+    spoken: 'End of the way. The robot turns round.',
     fix: 'Keep the turning place clear.',
   },
 ]

@@ -58,7 +58,7 @@ export function fill(spoken: string, site: Pick<Site, 'segment'>, feature: Featu
   const clock = clocks[feature.words.position?.says ?? side ?? 'ahead'] ?? "at 12 o'clock"
   return spoken.replace(/\{(\w+)\}/g, (_, field: string) => {
     if (field === 'role') return helper
-    if (field === 'side') return side ?? 'way'
+    if (field === 'side') return side ?? 'left or right'
     if (field === 'clock') return clock
     if (field === 'name') return nameOf(feature)
     return feature.words[field]?.says.replaceAll('-', ' ') ?? 'not known'

@@ -130,7 +130,7 @@ function slopeOf(setting: Setting, segment: Segment): Slope {
   const all = segment.features
     .filter((one) => one.kind === 'ramp')
     .flatMap((one) => {
-      const gradient = read(setting, one, 'gradient', 'both')
+      const gradient = read(setting, one, 'gradient', 'size')
       if (gradient) from.push(gradient)
       return gradient ? [travelled(gradient, one)] : []
     })

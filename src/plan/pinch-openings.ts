@@ -75,7 +75,7 @@ export function ofSqueeze(site: PinchSite, feature: Feature): Pinch | Lacking {
 
 export function ofObstruction(site: PinchSite, feature: Feature): Pinch | Lacking {
   const { read, segment } = site
-  const depth = read(feature, 'depth', 'both')
+  const depth = read(feature, 'depth', 'size')
   if (!depth) return { feature, lacking: 'how far it stands out' }
   const along = read(segment, 'width', 'low')
   if (!along) return { feature, lacking: 'clear width of the stretch' }
@@ -102,7 +102,7 @@ export function ofObstruction(site: PinchSite, feature: Feature): Pinch | Lackin
 
 export function ofChicane(site: PinchSite, feature: Feature): Pinch | Lacking {
   const { read, segment } = site
-  const depth = read(feature, 'depth', 'both')
+  const depth = read(feature, 'depth', 'size')
   const spacing = read(feature, 'spacing', 'both')
   const along = read(segment, 'width', 'low')
   if (!depth || !spacing) return { feature, lacking: depth ? 'distance between the two' : 'how far they stand out' }

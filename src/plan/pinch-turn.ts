@@ -16,7 +16,7 @@ const doorAtEnd: Metres = 1
 
 /** A turn through a door in the side wall is the door's: the same hand, about square, and at the part's end. */
 export function isThroughDoor(segment: Segment, turn: Feature, read: Read): boolean {
-  const angle = read(turn, 'angle', 'both')?.value
+  const angle = read(turn, 'angle', 'size')?.value
   if (angle === undefined || Math.abs(angle) < Math.PI / 3 || Math.abs(angle) > (Math.PI * 2) / 3) return false
   const hand = angle > 0 ? 'left' : 'right'
   const end = read(segment, 'length', 'low')?.value
@@ -51,7 +51,7 @@ export function ofTurn(site: PinchSite, turn: Feature): Pinch | Lacking | null {
       build: ({ w1 = 0, w2 = 0, k = 0, e = 0 }) => ({ kind: 'uturn', w1, w2, k, e, lead }),
     }
   }
-  const angle = read(turn, 'angle', 'both')
+  const angle = read(turn, 'angle', 'size')
   if (!angle) return { feature: turn, lacking: 'angle' }
   const ends = [Math.abs(angle.low), Math.abs(angle.value), Math.abs(angle.high)]
   const least = angle.low <= 0 && angle.high >= 0 ? 0 : Math.min(...ends)

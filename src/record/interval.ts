@@ -27,12 +27,13 @@ export interface Interval {
 /** Changed uncertainties by instrument, as a survey has them. */
 export type Changed = Readonly<Record<string, { absolute: number; relative: number }>>
 
-export type Unsafe = 'low' | 'high' | 'both'
+export type Unsafe = 'low' | 'high' | 'size' | 'both'
 
 export interface IntervalOptions {
   /**
    * The end at which the quantity does harm: 'low' for what there is (a clear width), 'high' for what is in the way,
-   * 'both' where neither end is the unsafe one (an angle, an offset): its safe side is then the end greater in size.
+   * 'size' for the end greater in size, whatever its sign (a gradient, an angle); 'both' where neither end is the unsafe
+   * one (a distance between two things, a thickness): taken on the safe side it is still tried at both.
    */
   unsafe: Unsafe
   changed?: Changed | undefined
@@ -106,8 +107,8 @@ function span(one: Reading, { unsafe, changed, pins }: IntervalOptions): Span {
   const value = pin ?? one.value
   const low = one.bound === 'below' ? Number.NEGATIVE_INFINITY : value - u
   const high = one.bound === 'above' ? Number.POSITIVE_INFINITY : value + u
-  if (!one.safeSide) return { low, value, high, u }
-  const end = unsafe === 'low' || (unsafe === 'both' && value < 0) ? low : high
+  if (!one.safeSide || unsafe === 'both') return { low, value, high, u }
+  const end = unsafe === 'low' || (unsafe === 'size' && value < 0) ? low : high
   return Number.isFinite(end) ? { low: end, value: end, high: end, u: 0 } : { low, value, high, u }
 }
 
@@ -132,7 +133,8 @@ function joined(place: readonly Reading[], options: IntervalOptions): Interval {
   const apart = taken.some((a) => taken.some((b) => disagree(a.one, a.at, b.one, b.at)))
   // "Take the safe side" of the unsafe-most reading settles the place there.
   const settled = worst.one.safeSide === true
-  const heard = settled ? [worst] : apart || unsafe === 'both' ? spans : [...speakers.values()]
+  const either = unsafe === 'both' || unsafe === 'size'
+  const heard = settled && unsafe !== 'both' ? [worst] : apart || either ? spans : [...speakers.values()]
   const low = Math.min(...heard.map(({ at }) => at.low))
   const high = Math.max(...heard.map(({ at }) => at.high))
   return {
@@ -181,6 +183,6 @@ function worse(a: Interval, b: Interval, unsafe: Unsafe): Interval {
 }
 
 function ends(low: number, high: number, unsafe: Unsafe): { unsafe: number; safe: number } {
-  const lower = unsafe === 'low' || (unsafe === 'both' && Math.abs(low) > Math.abs(high))
+  const lower = unsafe === 'low' || ((unsafe === 'both' || unsafe === 'size') && Math.abs(low) > Math.abs(high))
   return lower ? { unsafe: low, safe: high } : { unsafe: high, safe: low }
 }

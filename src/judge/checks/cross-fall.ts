@@ -12,7 +12,7 @@ export function crossFall(site: Site): Finding[] {
   return segment.features
     .filter((one) => one.kind === 'cross-fall')
     .flatMap((feature) => {
-      const gradient = read(setting, feature, 'gradient', 'both')
+      const gradient = read(setting, feature, 'gradient', 'size')
       if (!gradient) return []
       const { steepest, gentlest } = travelled(gradient, feature)
       const ratio = ratioOf({ low: gentlest, high: steepest }, { low: capacity, high: capacity })

@@ -30,7 +30,7 @@ export function noise({ around, segment, led }: Site): Finding[] {
         source: 'common practice, from memory',
         raw: says ? 'tight' : 'passes',
         demand: level,
-        caution: says ? 'Loud here. Feel the leash; expect no speech.' : null,
+        caution: says ? 'Loud noise. Feel the leash; expect no speech.' : null,
       }),
       readings,
     },

@@ -14,7 +14,7 @@ export function slope(site: Site): Finding[] {
   return segment.features
     .filter((one) => one.kind === 'ramp')
     .flatMap((feature) => {
-      const gradient = read(setting, feature, 'gradient', 'both')
+      const gradient = read(setting, feature, 'gradient', 'size')
       if (!gradient) return []
       const { steepest, gentlest, read: value } = travelled(gradient, feature)
       const ratio = ratioOf({ low: gentlest, high: steepest }, { low: robot.slope, high: robot.slope })

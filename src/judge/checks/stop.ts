@@ -70,7 +70,7 @@ export function stop(site: Site, known: StopsReckoned): PairCheck {
         demand,
         capacity,
         ratio,
-        caution: raw === 'tight' ? 'Slow. Be ready to stop.' : pace <= creeping + 1e-9 ? 'Very slow here.' : null,
+        caution: raw === 'tight' ? 'Slow. Be ready to stop.' : pace <= creeping + 1e-9 ? 'Very slow pace.' : null,
         at: { leash, pace },
         from: slope.from,
       })

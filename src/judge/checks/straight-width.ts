@@ -80,7 +80,7 @@ function judged({ setting }: Site, feature: string, subject: string, width: Inte
     demand,
     capacity: there.low,
     ratio: ratioOf({ low: demand, high: demand }, there),
-    caution: raw === 'tight' ? 'Narrow here: single file, arms in.' : null,
+    caution: raw === 'tight' ? 'Narrow: single file, arms in.' : null,
     from: [width],
     strict: true,
   })

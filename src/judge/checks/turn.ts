@@ -123,10 +123,10 @@ function pairOf(site: Site, pinch: Pinch, rooms: RoomSolver, nominal: PairCheck 
       ratio: ratio(room),
       caution:
         pauses > 0
-          ? 'The leash goes slack here. Stand still until it pulls.'
+          ? 'The leash goes slack. Stand still until it pulls.'
           : state === 'passes'
             ? null
-            : 'Tight here. Arms in.',
+            : 'Tight place. Arms in.',
       at: { leash, pace },
       from: pinch.from,
       strict: true,
