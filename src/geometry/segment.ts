@@ -12,7 +12,7 @@ export function pointToSegment(px: number, py: number, x0: number, y0: number, x
   const dy = y1 - y0
   const square = dx * dx + dy * dy
   let t = square > 0 ? ((px - x0) * dx + (py - y0) * dy) / square : 0
-  t = t < 0 ? 0 : t > 1 ? 1 : t
+  t = Math.max(0, Math.min(1, t))
   return lengthOf(px - x0 - t * dx, py - y0 - t * dy)
 }
 

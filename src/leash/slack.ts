@@ -1,8 +1,9 @@
 import type { Metres } from '../units/quantity.ts'
+import { costToGo, type Layer } from './cost-to-go.ts'
 import type { Field } from './field.ts'
 import type { Node } from './nodes.ts'
 import { pauseWay } from './pause.ts'
-import { costToGo, type Layer, rollOut, type Target, takenUp } from './roll-out.ts'
+import { rollOut, type Target, takenUp } from './roll-out.ts'
 import {
   better,
   depth,

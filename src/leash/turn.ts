@@ -186,7 +186,7 @@ export function closedTurnNodes(
   const corner = meeting(form, bodies, c, line)
   const nodes: Node[] = [{ x: scene.start.x, y: scene.start.y, psi: 0, length: separation, heading: 0, slack: false }]
   const last = () => nodes.at(-1) as Node
-  shiftToWall(nodes, bodies, separation, -form.w1 + bodies.b / 2 + c, line, corner.x - separation)
+  shiftToWall(nodes, separation, -form.w1 + bodies.b / 2 + c, line, corner.x - separation)
   walk(nodes, corner.x - separation - last().x)
   // Up the far wall: q falls exactly as on a tractrix, each step an arc of the same turn.
   let q = angle
@@ -222,14 +222,7 @@ function swing(nodes: Node[], turn: Radians): void {
 }
 
 /** From the centre line down to `target`: the robot runs along a line a little lower and the handler follows. */
-function shiftToWall(
-  nodes: Node[],
-  bodies: Bodies,
-  separation: Metres,
-  lowest: Metres,
-  target: Metres,
-  end: Metres,
-): void {
+function shiftToWall(nodes: Node[], separation: Metres, lowest: Metres, target: Metres, end: Metres): void {
   const start = nodes[0] as Node
   if (start.y - target < 1e-9) return
   const floor = Math.max(lowest, start.y - 0.9 * separation)

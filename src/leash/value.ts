@@ -72,7 +72,7 @@ function raiseDirection(field: Field, value: Float32Array, k: number): number {
       const straight = keep * one + weight * two
       if (straight > best) best = straight
     }
-    const next = best < limit ? best : limit
+    const next = Math.min(best, limit)
     if (next > old) {
       value[s] = next
       if (next - old > raised) raised = next - old
