@@ -1,8 +1,10 @@
+import { createHash } from 'node:crypto'
 import compress from '@fastify/compress'
 import helmet from '@fastify/helmet'
 import rateLimit from '@fastify/rate-limit'
 import type { TypeBoxTypeProvider } from '@fastify/type-provider-typebox'
 import Fastify, { type FastifyBaseLogger, LogController } from 'fastify'
+import { style } from '../sheets/html/style.ts'
 import { largestBody } from '../sync/messages.ts'
 import { answerErrors, answerUnknown } from './answers.ts'
 import { readBody } from './body.ts'
@@ -111,13 +113,16 @@ export async function buildServer(
   return { app, routes }
 }
 
+// A previewed sheet carries its one style inside and stands under the page's policy: its hash lets it through.
+const sheetStyle = `'sha256-${createHash('sha256').update(style).digest('base64')}'`
+
 const headers = {
   contentSecurityPolicy: {
     useDefaults: false,
     directives: {
       defaultSrc: ["'none'"],
       scriptSrc: ["'self'", "'wasm-unsafe-eval'"],
-      styleSrc: ["'self'"],
+      styleSrc: ["'self'", sheetStyle],
       imgSrc: ["'self'", 'blob:', 'data:'],
       connectSrc: ["'self'"],
       workerSrc: ["'self'"],
