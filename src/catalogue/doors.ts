@@ -108,6 +108,7 @@ export const doors: readonly Kind[] = [
       newtons('force', 'force to open', 'always'),
       metres('closedRoom', 'clear width beside the handle, door shut', 'always'),
       words('parks', 'side it parks on', ['left', 'right']),
+      words('fire', 'fire door', ['yes', 'no'], 'always'),
     ],
     feeds: manual,
     spoken: 'Sliding door, {clock}. Stop and find the handle first.',

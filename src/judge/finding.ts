@@ -104,10 +104,10 @@ function endOf(needed: number, there: number): number | null {
   return there === Number.POSITIVE_INFINITY ? 0 : Math.max(0, needed / there)
 }
 
-/** The state of a ratio: null ends count as above 1. */
+/** The state of a ratio: null ends count as above 1. Asked so that no number never passes. */
 export function stateOf([low, high]: Ratio): 'passes' | 'tight' | 'unsure' | 'fails' {
-  if (low === null || low > 1 + epsilon) return 'fails'
-  if (high === null || high > 1 + epsilon) return 'unsure'
+  if (low === null || !(low <= 1 + epsilon)) return 'fails'
+  if (high === null || !(high <= 1 + epsilon)) return 'unsure'
   return high > passesTo + epsilon ? 'tight' : 'passes'
 }
 
@@ -117,8 +117,8 @@ export function roomState(
   need: number,
   band: number,
 ): 'passes' | 'tight' | 'unsure' | 'fails' {
-  if (room.high === null || room.high < need - epsilon) return 'fails'
-  if (room.low === null || room.low < need - epsilon) return 'unsure'
+  if (room.high === null || !(room.high >= need - epsilon)) return 'fails'
+  if (room.low === null || !(room.low >= need - epsilon)) return 'unsure'
   return room.low < need + band - epsilon ? 'tight' : 'passes'
 }
 

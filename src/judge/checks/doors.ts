@@ -9,7 +9,7 @@ export interface DoorWays {
   judgedShut: boolean
   /** Nothing moves it while a team passes. */
   noLimit: boolean
-  /** A person holds it: that person is help. */
+  /** A person holds it, or both pairs of a lobby, lest they close on a team between them: that person is help. */
   person: boolean
 }
 
@@ -18,12 +18,17 @@ export function doorWays(feature: Feature): DoorWays {
   const fire = feature.words.fire?.says === 'yes'
   const row = kind(feature.kind)
   const stop = kept === 'stop'
+  const noLimit = (stop && !fire) || kept === 'stays' || feature.words.staysOpen?.says === 'yes'
   return {
     manual: row?.feeds.includes('door-force') === true && !(stop && !fire),
     judgedShut: stop && fire,
-    noLimit: (stop && !fire) || kept === 'stays' || feature.words.staysOpen?.says === 'yes',
-    person: kept === 'person',
+    noLimit,
+    person: kept === 'person' || (isLobby(feature) && !noLimit),
   }
+}
+
+function isLobby({ readings: { pairs = [], lobbyLength = [] } }: Feature): boolean {
+  return lobbyLength.length > 0 || pairs.some((one) => one.value > 1 || one.bound === 'above')
 }
 
 /** Doors and gates of the catalogue that close in time, lifts apart. */

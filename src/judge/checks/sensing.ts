@@ -19,7 +19,10 @@ export function sensing(site: Site): Finding[] {
     const seen =
       (feature.kind === 'glass' && robot.senses.glass) || (feature.kind === 'dark-floor' && robot.senses.darkFloor)
     const low = feature.kind === 'overhang' || feature.kind === 'under-stair'
-    const hidden = row?.aspect === 'sensing' || (low && !robot.senses.overhangs && isUnderHead(site, feature))
+    const hidden =
+      row?.aspect === 'sensing' ||
+      isOverPlane(site, feature) ||
+      (low && !robot.senses.overhangs && isUnderHead(site, feature))
     if (!hidden || seen) continue
     const across = feature.kind === 'rope' && feature.words.place?.says !== 'beside'
     const help = helpLedOtherwise(site, feature) ?? (across ? helpAt(site, feature) : undefined)
@@ -27,7 +30,7 @@ export function sensing(site: Site): Finding[] {
       one({
         feature: feature.id,
         subject: `Sensing at ${nameOf(feature)}`,
-        detail: () => (row?.unsensed ?? 'not sensed').replace(/\.$/, ''),
+        detail: () => (row?.unsensed ?? 'the robot senses under it').replace(/\.$/, ''),
         harm: row?.harm ?? 'trap',
         raw: across ? 'needs-help' : 'tight',
         caution: 'The robot may slow or stop. Then stand still.',
@@ -36,6 +39,13 @@ export function sensing(site: Site): Finding[] {
     )
   }
   return [...found, ...letGo(site), ...rain(site)]
+}
+
+/** A table top or shelf under which the robot senses nothing. */
+function isOverPlane({ setting }: Site, feature: Site['segment']['features'][number]): boolean {
+  if (feature.kind !== 'obstruction') return false
+  const lowest = read(setting, feature, 'height', 'high')
+  return lowest !== null && lowest.high > setting.team.card.robot.sensingPlane + epsilon
 }
 
 function isUnderHead({ setting }: Site, feature: Site['segment']['features'][number]): boolean {
