@@ -49,8 +49,9 @@ process.exit(broken || failed > 0 ? 1 : 0)
 
 /** The built app is what the browser tests drive: true where it is missing or older than what it was built from. */
 function isStale() {
-  if (!existsSync('dist/index.html') || !existsSync('dist/cli.js')) return true
-  const built = Math.min(statSync('dist/index.html').mtimeMs, statSync('dist/cli.js').mtimeMs)
+  const made = ['dist/index.html', 'dist/cli.js', 'dist/office.js']
+  if (!made.every(existsSync)) return true
+  const built = Math.min(...made.map((path) => statSync(path).mtimeMs))
   const newest = (path) =>
     statSync(path).isDirectory()
       ? Math.max(0, ...readdirSync(path).map((name) => newest(join(path, name))))

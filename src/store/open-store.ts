@@ -9,6 +9,7 @@ import { clearMemo, keepMemo, readMemo, readWholeMemo } from './memo.ts'
 import { forgetOffice, recall, remember } from './office.ts'
 import { keepPhoto, readPhoto } from './photos.ts'
 import { reissue } from './reissue.ts'
+import { removeSurvey } from './remove-survey.ts'
 import { changeSettings, deviceId, readSettings, renewDeviceId, type Settings } from './settings.ts'
 import { catchUp, openLog } from './snapshots.ts'
 import { askToPersist, type StorageState, storageState } from './storage-state.ts'
@@ -59,6 +60,8 @@ export interface Store {
   backUp(): Promise<string>
   restore(text: string): Promise<Restored>
   close(): void
+  /** Deletes a survey and the photos given from this phone for good. */
+  removeSurvey(survey: string, photos: readonly string[]): Promise<{ saved: true } | Trouble>
   /** Deletes everything this phone keeps. Other tabs can keep nothing more until they are loaded again. */
   wipe(): Promise<void>
 }
@@ -125,6 +128,7 @@ export async function openStore(name = 'tautline'): Promise<Opened> {
         tabs.close()
         database.close()
       },
+      removeSurvey: (survey, photos) => removeSurvey(database, survey, photos),
       async wipe() {
         store.close()
         await deleteDB(name)

@@ -1,7 +1,7 @@
 import { type Exchanged, type ExchangeProgress, exchangeSurvey } from './exchange.ts'
 import type { Line } from './line.ts'
 import type { PhoneStore } from './phone-store.ts'
-import { type PhotosSent, sendPhotos } from './photos.ts'
+import { type PhotosSent, photosNamed, sendPhotos } from './photos.ts'
 
 /** The phone's side of the exchange: what the app's Sync screen and its background work come in by. */
 export { enrol, signOut } from './enrol.ts'
@@ -12,6 +12,7 @@ export { type OfficeVenue, officeVenues } from './office-venues.ts'
 export type { PhoneStore } from './phone-store.ts'
 export { startRetrying } from './retry.ts'
 export { saysWhere, type Whereabouts, whereabouts } from './whereabouts.ts'
+export { photosNamed }
 
 export interface SurveySynced {
   survey: string

@@ -16,8 +16,11 @@ export type Exchanged =
   | { ok: true; sent: number; got: number; at: string }
   | {
       ok: false
-      /** `later`: no answer, try again by itself. `signed-out`: the office ended this phone's token. `refused`: a person has to see to it. */
-      kind: 'later' | 'signed-out' | 'refused'
+      /**
+       * `later`: no answer, try again by itself. `signed-out`: the office ended this phone's token. `erased`: the office
+       * deleted it for good. `refused`: a person has to see to it.
+       */
+      kind: 'later' | 'signed-out' | 'erased' | 'refused'
       what: string
       whatToDo: string
     }
@@ -62,7 +65,7 @@ export async function exchangeSurvey(
       const { error, what, whatToDo, device, next } = refusal
       if (error === 'fork' && device !== undefined && next !== undefined)
         return { ok: false, kind: 'copied', what, whatToDo, device, first: next }
-      return { ok: false, kind: isSignedOut(error) ? 'signed-out' : 'refused', what, whatToDo }
+      return { ok: false, kind: kindOf(error), what, whatToDo }
     }
     const { body } = reply
     const fault = faultOf(survey, body)
@@ -109,6 +112,7 @@ function isFurther(now: Have, before: Have): boolean {
   return Object.entries(now).some(([device, n]) => n > numberIn(before, device))
 }
 
-function isSignedOut(error: string): boolean {
-  return error === 'revoked' || error === 'token' || error === 'no-token'
+function kindOf(error: string): 'signed-out' | 'erased' | 'refused' {
+  if (error === 'revoked' || error === 'token' || error === 'no-token') return 'signed-out'
+  return error === 'erased' ? 'erased' : 'refused'
 }

@@ -125,6 +125,7 @@ describe('a phone at its office', () => {
     await work.begin()
     work.send('all')
     await settled(work)
+    await work.look()
     expect(work.where.value.get('s')).toEqual({ where: 'phone', waiting: 1, lastAtOffice: null })
     expect(office.asked).toEqual([])
   })
@@ -207,6 +208,7 @@ describe('a phone at its office', () => {
     ['not-found', 404],
     ['app-too-old', 426],
     ['gap', 409],
+    ['erased', 410],
   ])(
     'a survey refused by "%s" says what and what to do, and is free again once it got through',
     async (error, status) => {
@@ -215,7 +217,12 @@ describe('a phone at its office', () => {
       office.refusal = { status, error, what: 'It will not do.', whatToDo: 'Do this.' }
       work.send('all')
       await settled(work)
-      expect(work.stuck.value.get('s')).toEqual({ what: 'It will not do.', whatToDo: 'Do this.', copied: null })
+      expect(work.stuck.value.get('s')).toEqual({
+        what: 'It will not do.',
+        whatToDo: 'Do this.',
+        copied: null,
+        erased: error === 'erased',
+      })
       expect(work.said.value?.failed).toBe(true)
       office.refusal = null
       work.send('all')

@@ -42,7 +42,7 @@ export class OfficeServer {
   /** Asks as the administrator. */
   // What comes back is looked at, not typed.
   // biome-ignore lint/suspicious/noExplicitAny: answers of several routes
-  async ask(method: 'GET' | 'POST', path: string, body?: object): Promise<any> {
+  async ask(method: 'GET' | 'POST' | 'PUT' | 'DELETE', path: string, body?: object): Promise<any> {
     const reply = await fetch(`${this.address}${path}`, {
       method,
       headers: {

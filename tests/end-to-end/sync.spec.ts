@@ -187,6 +187,25 @@ test('two phones at one office: recorded apart without a network, both have ever
         await expect(whereIs(b, 'Reed House')).toContainText(/On this phone only: \d+ entries; the rest at the office/)
       })
 
+      await test.step('what the office erased for good is told, and goes from the phone when a person says so', async () => {
+        await a.goto(office.address)
+        await a.getByLabel('Name of the venue').fill('Sedge Court')
+        await a.getByRole('button', { name: 'New venue' }).click()
+        await expect(a.getByRole('heading', { level: 1, name: 'Sedge Court' })).toBeVisible()
+        const survey = /venue\/([^/]+)/.exec(a.url())?.[1] ?? ''
+        await toOffice(a)
+        await a.getByRole('button', { name: 'Send now' }).click()
+        await expect(whereIs(a, 'Sedge Court')).toContainText('At the office')
+        await office.ask('PUT', `/api/surveys/${survey}/client`, { client: 'N. N.' })
+        await office.ask('DELETE', '/api/clients/N.%20N.')
+        await a.getByRole('button', { name: 'Send now' }).click()
+        await expect(whereIs(a, 'Sedge Court')).toContainText('was erased at the office')
+        await a.getByRole('button', { name: 'Remove it from this phone' }).click()
+        await a.getByRole('button', { name: 'Remove for good' }).click()
+        await expect(whereIs(a, 'Sedge Court')).toHaveCount(0)
+        await expect(whereIs(a, 'Reed House')).toContainText('At the office')
+      })
+
       await test.step('signing out with wiping is asked once, and leaves nothing', async () => {
         await a.goto(`${office.address}/sync`)
         await a.getByRole('button', { name: 'Sign this phone out' }).click()

@@ -68,6 +68,31 @@ describe('wiping', () => {
   })
 })
 
+describe('removing one survey', () => {
+  it('leaves nothing of it and everything of the others, also after loading again', async () => {
+    const name = freshName()
+    const tab = await openTab(name)
+    for (const survey of ['v', 'v2']) {
+      const log = await tab.openSurvey(survey)
+      await tab.commit(log, nameVenue(log, { name: survey }), 'Ada')
+      await tab.keepDraft(survey, 'half')
+    }
+    for (const id of ['p', 'p2']) await tab.keepPhoto({ id, type: 'image/jpeg', bytes: new ArrayBuffer(1) })
+    expect(await tab.removeSurvey('v', ['p'])).toEqual({ saved: true })
+    tab.close()
+    const again = await openTab(name)
+    expect((await again.surveys()).map(({ survey }) => survey)).toEqual(['v2'])
+    expect([await again.factsAfter('v', new Map()), await again.seen('v'), await again.readDraft('v')]).toEqual([
+      [],
+      [],
+      null,
+    ])
+    expect([await again.readPhoto('p'), (await again.readPhoto('p2'))?.id]).toEqual([null, 'p2'])
+    expect(await again.factsAfter('v2', new Map())).toHaveLength(1)
+    expect(await again.readDraft('v2')).toBe('half')
+  })
+})
+
 describe('two phones under one id', () => {
   /** A phone, and its copy with the same id and the same first entries. */
   async function copied(): Promise<[Store, Store]> {

@@ -133,7 +133,7 @@ describe('an exchange', () => {
 
   test.each([
     ['revoked', 401, 'signed-out'],
-    ['erased', 410, 'refused'],
+    ['erased', 410, 'erased'],
     ['app-too-old', 426, 'refused'],
     ['office', 500, 'later'],
     ['too-many', 429, 'later'],

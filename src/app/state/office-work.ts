@@ -46,6 +46,8 @@ export interface Copied {
 /** A survey that did not get through. */
 export interface Stuck extends Told {
   copied: Copied | null
+  /** The office deleted it for good, and this phone should. */
+  erased: boolean
 }
 
 export interface Under {
@@ -183,7 +185,8 @@ export function officeWork(phone: Phone): OfficeWork {
     look,
     async begin() {
       enrolment.value = await phone.recallEnrolment()
-      await look()
+      // Reading all that is on the phone is not worth it where nothing is ever sent.
+      if (enrolment.value) await look()
     },
     async enrol({ address, code, label }) {
       const request = { code: code.trim(), label: label.trim(), record: phone.device() }
@@ -275,13 +278,16 @@ function stuckAfter(before: ReadonlyMap<string, Stuck>, results: readonly Survey
   const after = new Map(before)
   for (const { survey, entries, photos } of results) {
     after.delete(survey)
-    if (!entries.ok && entries.kind === 'refused')
-      after.set(survey, { what: entries.what, whatToDo: entries.whatToDo, copied: null })
+    if (!entries.ok && (entries.kind === 'refused' || entries.kind === 'erased')) {
+      const { what, whatToDo, kind } = entries
+      after.set(survey, { what, whatToDo, copied: null, erased: kind === 'erased' })
+    }
     if (!entries.ok && entries.kind === 'copied')
       after.set(survey, {
         what: `This phone is a copy of another, or the other of this: both wrote entry ${entries.first} and on. Nothing is lost.`,
         whatToDo: 'Keep both: this phone’s entries then stand beside the other’s, and go to the office.',
         copied: { device: entries.device, first: entries.first },
+        erased: false,
       })
     const refused = photos?.refused[0]
     if (refused)
@@ -289,13 +295,16 @@ function stuckAfter(before: ReadonlyMap<string, Stuck>, results: readonly Survey
         what: `${photos.refused.length === 1 ? 'A photo was' : `${photos.refused.length} photos were`} not taken: ${refused.what}`,
         whatToDo: 'It stays on this phone: make a back-up, and take the photo again.',
         copied: null,
+        erased: false,
       })
   }
   return after
 }
 
 function outcome(results: readonly SurveySynced[], stuck: number): Told & { failed: boolean } {
-  const failed = results.find(({ entries }) => !entries.ok && entries.kind !== 'copied' && entries.kind !== 'refused')
+  const failed = results.find(
+    ({ entries }) => !entries.ok && (entries.kind === 'later' || entries.kind === 'signed-out'),
+  )
   if (failed && !failed.entries.ok)
     return { what: failed.entries.what, whatToDo: failed.entries.whatToDo, failed: failed.entries.kind !== 'later' }
   const sum = (of: 'sent' | 'got') => results.reduce((all, { entries }) => all + (entries.ok ? entries[of] : 0), 0)

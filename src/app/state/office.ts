@@ -2,8 +2,9 @@ import { effect } from '@preact/signals'
 import { currentValue } from '../../record/log.ts'
 import { root } from '../../record/placement.ts'
 import type { Store } from '../../store/open-store.ts'
-import { saysWhere } from '../../sync/client.ts'
+import { photosNamed, saysWhere } from '../../sync/client.ts'
 import { dayAndHour } from '../components/day-words.ts'
+import { keepForm } from './form-draft.ts'
 import { officeTrouble, surveyIs } from './office-said.ts'
 import { type Copied, type Enrolment, type OfficeWork, officeWork, type Phone, type Told } from './office-work.ts'
 import { catchUpSessions } from './open-session.ts'
@@ -56,6 +57,22 @@ export async function keepBoth(survey: string, { device, first }: Copied): Promi
   return null
 }
 
+/** Deletes a survey from this phone, as the office has, and begins the page anew. Photos that another survey names stay. */
+export async function removeHere(survey: string): Promise<Told | null> {
+  const store = await phoneStore()
+  const named = async (id: string) => photosNamed(await store.factsAfter(id, new Map()))
+  const others = (await store.surveys()).filter((row) => row.survey !== survey)
+  const kept = new Set((await Promise.all(others.map((row) => named(row.survey)))).flat())
+  const removed = await store.removeSurvey(
+    survey,
+    (await named(survey)).filter((photo) => !kept.has(photo)),
+  )
+  if (!removed.saved) return removed
+  await Promise.all([store.remember(`sync/${survey}`, null), keepForm(`team ${survey}`, null)])
+  location.reload()
+  return null
+}
+
 function tellFirstPage({ enrolment, where, stuck }: OfficeWork): void {
   const office = enrolment.value
   const says = [...where.value].map(([survey, one]): [string, string] => {
@@ -67,12 +84,12 @@ function tellFirstPage({ enrolment, where, stuck }: OfficeWork): void {
 }
 
 function phoneOf(store: Store): Phone {
-  const invented = new Map<string, boolean>()
+  // Kept, so that a long survey is not read whole at each start for this alone.
   const isInvented = async (survey: string) => {
-    const known = invented.get(survey)
-    if (known !== undefined) return known
+    const known = await store.recall(`invented/${survey}`)
+    if (typeof known === 'boolean') return known
     const isDemo = currentValue(await store.openSurvey(survey), root, 'demo') === true
-    invented.set(survey, isDemo)
+    await store.remember(`invented/${survey}`, isDemo)
     return isDemo
   }
   return {

@@ -3,7 +3,7 @@ import { saysWhere } from '../../../sync/client.ts'
 import { BigKey } from '../../components/big-key.tsx'
 import { dayAndHour } from '../../components/day-words.ts'
 import { StatusLine } from '../../components/status-line.tsx'
-import { keepBoth } from '../../state/office.ts'
+import { keepBoth, removeHere } from '../../state/office.ts'
 import type { OfficeWork, Stuck } from '../../state/office-work.ts'
 import { surveysOnPhone } from '../../state/surveys.ts'
 
@@ -37,9 +37,10 @@ export function SurveyList({ work }: { work: OfficeWork }) {
   )
 }
 
-/** What holds a survey up; for a copied phone, the key that keeps what both wrote. */
+/** What holds a survey up; the key that keeps what two copies of a phone wrote, or that erases what the office has erased. */
 function HeldUp({ survey, stuck }: { survey: string; stuck: Stuck | undefined }) {
   const [refused, setRefused] = useState('')
+  const [asked, setAsked] = useState(false)
   if (!stuck) return null
   const { copied } = stuck
   return (
@@ -56,6 +57,23 @@ function HeldUp({ survey, stuck }: { survey: string; stuck: Stuck | undefined })
         >
           Keep both
         </BigKey>
+      )}
+      {stuck.erased && !asked && <BigKey press={() => setAsked(true)}>Remove it from this phone</BigKey>}
+      {stuck.erased && asked && (
+        <>
+          <p>Every entry, draft and photo of it on this phone is deleted. This cannot be undone.</p>
+          <div class="keys">
+            <BigKey
+              press={async () => {
+                const told = await removeHere(survey)
+                if (told) setRefused(`${told.what} ${told.whatToDo}`)
+              }}
+            >
+              Remove for good
+            </BigKey>
+            <BigKey press={() => setAsked(false)}>Not now</BigKey>
+          </div>
+        </>
       )}
       <StatusLine text={refused} failed={refused !== ''} />
     </>

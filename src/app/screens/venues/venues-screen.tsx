@@ -27,7 +27,7 @@ export function VenuesScreen() {
     // Looks again what waits, after whatever was recorded. The list stands without it.
     import('../../state/office.ts')
       .then(({ office }) => office())
-      .then((work) => work.look())
+      .then((work) => (work.enrolment.value ? work.look() : undefined))
       .catch(() => undefined)
   }, [])
 
