@@ -4,7 +4,8 @@ import { BigKey } from '../../components/big-key.tsx'
 import { dayAndHour } from '../../components/day-words.ts'
 import { StatusLine } from '../../components/status-line.tsx'
 import { keepBoth, removeHere } from '../../state/office.ts'
-import type { OfficeWork, Stuck } from '../../state/office-work.ts'
+import type { Stuck } from '../../state/office-outcome.ts'
+import type { OfficeWork } from '../../state/office-work.ts'
 import { surveysOnPhone } from '../../state/surveys.ts'
 
 /** Each survey, where it is, and what holds it up. */
