@@ -219,13 +219,22 @@ const idle = new Set(['name', 'note', 'photos', 'startSign', 'what'])
 /** What of the survey itself every judgement is made with. */
 const ofAll = new Set(['team', 'hours', 'code', 'instruments'])
 
-/** Versions of things on this segment, or of what all is judged with, that nobody has settled. */
+/** Versions of things on this segment, or of what all is judged with, that nobody has settled or this version cannot read. */
 export function conflicts({ segment, zone, around, setting }: Site): Gap[] {
   const holders = [segment, ...featuresOf({ segment }), ...around.seen]
   const own = new Set([...holders.flatMap(idsOf), ...(zone ? [zone.id] : [])])
-  return unsettled(setting, (one) => own.has(one.entity) || (one.entity === root && ofAll.has(one.field))).map((one) =>
-    differ(undefined, `${segment.name}: two versions of ${one.field}.`, 'fall'),
-  )
+  const concerns = ({ entity, field }: { entity: string; field: string }) =>
+    own.has(entity) || (entity === root && ofAll.has(field))
+  return [
+    ...unsettled(setting, concerns).map((one) =>
+      differ(undefined, `${segment.name}: two versions of ${one.field}.`, 'fall'),
+    ),
+    ...setting.setAside
+      .filter((one) => concerns(one) && !idle.has(one.field))
+      .map((one) =>
+        unanswered(undefined, `${segment.name}: ${one.field} is recorded in a way that this version cannot read.`),
+      ),
+  ]
 }
 
 /** Versions that move what is judged; answers in words carry theirs themselves. */

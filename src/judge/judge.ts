@@ -64,6 +64,7 @@ export function settingOf(survey: Survey, options: Omit<JudgeOptions, 'walk' | '
   return {
     view,
     conflicts: (survey.conflicts ?? []).filter((one) => one.entity !== root || !given.has(one.field)),
+    setAside: (survey.setAside ?? []).filter((one) => one.entity !== root || !given.has(one.field)),
     team: teamOf(options.team ?? view.team ?? defaultTeamCard),
     pack: pack(options.code ?? view.code),
     on,

@@ -1,5 +1,5 @@
 import { type Interval, interval, type Unsafe } from '../record/interval.ts'
-import type { Conflict, Reading, SurveyView } from '../record/survey.ts'
+import type { Conflict, Reading, SetAside, SurveyView } from '../record/survey.ts'
 import type { CodePack } from '../standards/pack.ts'
 import type { Team } from './team.ts'
 
@@ -13,6 +13,8 @@ export interface Hours {
 export interface Setting {
   view: SurveyView
   conflicts: readonly Conflict[]
+  /** What was recorded and this version cannot read. */
+  setAside: readonly SetAside[]
   team: Team
   pack: CodePack
   /** ISO date judged for. */

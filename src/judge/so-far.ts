@@ -38,6 +38,7 @@ export function soFar(segment: Segment, view: SurveyView, team: TeamCard | undef
   const setting: Setting = {
     view,
     conflicts: [],
+    setAside: [],
     team: teamOf(team ?? view.team ?? defaultTeamCard),
     pack,
     on: '',

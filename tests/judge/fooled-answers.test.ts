@@ -184,6 +184,18 @@ describe('two versions that nobody has settled', () => {
     expect(runToEnd(judgeSurvey(recorded, { planner: doublePlanner, on })).walks[0]?.verdict).toBe('not-known')
   })
 
+  test.each(['segment', 'feature', 'venue'])('an answer of the %s that this version cannot read is none', (holder) => {
+    const segment = stretch({ features: [feature('handrail')] })
+    const entity = { segment: segment.id, feature: segment.features[0]?.id ?? '', venue: '@venue' }[holder] as string
+    const field = holder === 'venue' ? 'instruments' : 'word/edge'
+    const recorded = {
+      ...survey([walkOf([segment])]),
+      setAside: [{ entity, field, expected: 'swept', found: '"by-drone"' }],
+    }
+    const result = runToEnd(judgeSurvey(recorded, { planner: doublePlanner, on, team: card() })).walks[0]
+    expect(result?.verdict).toBe('not-known')
+  })
+
   test('of the way out', () => {
     const wayOut = { ...says('yes'), rivals: [{ says: 'lift', how: 'swept' as const, person: 'B' }] }
     const result = judgedWalk([stretch()], {}, { words: { wayOut, helpCall: says('0'), rest: says('none') } })
