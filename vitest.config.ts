@@ -5,5 +5,6 @@ export default defineConfig({
     include: ['tests/**/*.test.ts'],
     exclude: ['tests/end-to-end/**', 'tests/bench/**'],
     testTimeout: 120_000,
+    maxWorkers: 2,
   },
 })

@@ -43,7 +43,10 @@ describe.each(demoVenues)('the sheets of the demo venue %s', (name) => {
     (id, walk) => {
       const real = survey.view.walks.find((one) => one.id === id)
       if (!real) throw new Error('no such walk')
-      const tried = { ...real, states: [{ state: 'tried' as const, name: 'Cy Dale', date: on }] }
+      const tried = {
+        ...real,
+        states: [{ state: 'tried' as const, name: 'Cy Dale', date: on, team: assessment.team.version }],
+      }
       const forced = { ...walk, verdict: 'with-help' as const, leash: walk.leash ?? 1, pace: walk.pace ?? 0.5 }
       const asked = { ...survey, view: { ...survey.view, walks: [tried] } }
       const sheet = given(outline(asked, forced, assessment, 'client', { on }))

@@ -29,7 +29,8 @@ describe('a tape survey alone never reaches a client', () => {
     ['nobody has signed', []],
     ['surveyed and judged', [mark('surveyed'), mark('judged')]],
     ['tried with another version of the card', [mark('tried', { team: '3' })]],
-    ['tried after the day of the sheet', [mark('tried', { date: '2026-11-02' })]],
+    ['tried, card not said', [mark('tried')]],
+    ['tried after the day of the sheet', [mark('tried', { date: '2026-11-02', team: '4' })]],
     ['reviewed and issued without a trial', [mark('reviewed'), mark('issued')]],
   ])('refuses: %s', (_, states) => {
     for (const verdict of ['usable', 'with-cautions', 'with-help'] as const)
@@ -44,8 +45,7 @@ describe('a tape survey alone never reaches a client', () => {
 
   it.each([
     ['tried with this card', [tried]],
-    ['tried, card not said', [mark('tried')]],
-    ['tried on the day itself', [mark('tried', { date: on })]],
+    ['tried on the day itself', [mark('tried', { date: on, team: '4' })]],
     ['tried with the old card, then with this', [mark('tried', { team: '3' }), tried]],
   ])('gives one: %s', (_, states) => {
     expect(sheet('client', 'with-cautions', states).kind).toBe('outline')

@@ -4,6 +4,9 @@ import type { Scope } from './scope.ts'
 import type { Refusal } from './tree.ts'
 import { dayWords } from './words.ts'
 
+/** A trial is one robot's, one card's: a mark that does not say which proves nothing for this one. */
+const bound: readonly WalkState[] = ['tried', 'walked']
+
 /**
  * The last mark of a state that holds for this sheet: made by its date, and not with another version of the team card.
  */
@@ -12,7 +15,7 @@ export function markOf(scope: Scope, state: WalkState): StateMark | null {
     (mark) =>
       mark.state === state &&
       mark.date <= scope.options.on &&
-      (mark.team === undefined || mark.team === scope.assessment.team.version),
+      (mark.team === scope.assessment.team.version || (mark.team === undefined && !bound.includes(state))),
   )
   return held.at(-1) ?? null
 }
@@ -24,7 +27,7 @@ export function clientRefusal(scope: Scope): Refusal | null {
   const other = scope.walk.states.filter((mark) => mark.state === 'tried').at(-1)
   const tried = `tried by staff with this robot (${own(name)}, version ${own(version)})`
   const found = other
-    ? `it was tried on ${dayWords(other.date)} with ${other.team === undefined ? 'this team' : `version ${own(other.team)}`}`
+    ? `it was tried on ${dayWords(other.date)} with ${other.team === undefined ? 'a team card that the mark does not name' : `version ${own(other.team)}`}`
     : 'nobody has tried it'
   return {
     kind: 'refusal',

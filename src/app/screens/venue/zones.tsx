@@ -1,6 +1,7 @@
 import { addZone, setZoneField } from '../../../record/operations/venue.ts'
 import type { SurveyView, Zone } from '../../../record/survey.ts'
 import { Adder } from '../../components/adder.tsx'
+import { SelectField } from '../../components/field.tsx'
 import { AllowedForm } from './allowed-form.tsx'
 import { AnswerItems } from './answer-items.tsx'
 import { Observations } from './observations.tsx'
@@ -31,6 +32,16 @@ const items = [
       { value: 'yes', label: 'yes' },
     ],
   },
+] as const
+
+const yesNo = [
+  { value: 'yes', label: 'yes' },
+  { value: 'no', label: 'no' },
+] as const
+
+const sides = [
+  { field: 'outdoors', label: 'Outdoors' },
+  { field: 'nearOutsideDoor', label: 'An outside door is within 10 m' },
 ] as const
 
 /** Parts of the venue with their surroundings at an hour, and who allows the robot. */
@@ -65,29 +76,25 @@ function ZoneForm({ writer, zone }: { writer: Writer; zone: Zone }) {
   return (
     <div class="stack">
       <AllowedForm writer={writer} zone={zone} />
-      <Tick
-        label="Outdoors"
-        on={zone.outdoors === true}
-        set={(on) => void writer.write((log) => setZoneField(log, zone.id, 'outdoors', on), `${zone.name}: outdoors`)}
-      />
-      <Tick
-        label="An outside door is within 10 m"
-        on={zone.nearOutsideDoor === true}
-        set={(on) =>
-          void writer.write((log) => setZoneField(log, zone.id, 'nearOutsideDoor', on), `${zone.name}: outside door`)
-        }
-      />
+      {/* Not said is not "no": an unanswered zone is reckoned wet. */}
+      {sides.map(({ field, label }) => (
+        <SelectField
+          key={field}
+          label={label}
+          value={zone[field] === undefined ? '' : zone[field] ? 'yes' : 'no'}
+          change={(says) =>
+            says !== '' &&
+            void writer.write(
+              (log) => setZoneField(log, zone.id, field, says === 'yes'),
+              `${zone.name}, ${label.toLowerCase()}: ${says}`,
+            )
+          }
+          choices={yesNo}
+          open="Not answered"
+        />
+      ))}
       <AnswerItems writer={writer} holder={zone} items={items} />
       <Observations writer={writer} zone={zone} />
     </div>
-  )
-}
-
-function Tick(props: { label: string; on: boolean; set(on: boolean): void }) {
-  return (
-    <label class="tick-row">
-      <input type="checkbox" checked={props.on} onChange={(event) => props.set(event.currentTarget.checked)} />
-      <span>{props.label}</span>
-    </label>
   )
 }
