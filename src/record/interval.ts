@@ -123,18 +123,18 @@ function joined(place: readonly Reading[], options: IntervalOptions): Interval {
   const order = (s: Span) =>
     unsafe === 'low' ? s.low : unsafe === 'high' ? -s.high : -Math.max(Math.abs(s.low), Math.abs(s.high))
   // Each person's repeats: the unsafe-most speaks for that person, with its own uncertainty.
-  const speakers = new Map<string, { one: Reading; at: Span }>()
+  const voices = new Map<string, { one: Reading; at: Span }>()
   for (const next of spans) {
     const name = next.one.person ?? ''
-    const known = speakers.get(name)
-    if (!known || order(next.at) < order(known.at)) speakers.set(name, next)
+    const known = voices.get(name)
+    if (!known || order(next.at) < order(known.at)) voices.set(name, next)
   }
   const worst = spans.reduce((a, b) => (order(b.at) < order(a.at) ? b : a))
   const apart = taken.some((a) => taken.some((b) => disagree(a.one, a.at, b.one, b.at)))
   // "Take the safe side" of the unsafe-most reading settles the place there.
   const settled = worst.one.safeSide === true
   const either = unsafe === 'both' || unsafe === 'size'
-  const heard = settled && unsafe !== 'both' ? [worst] : apart || either ? spans : [...speakers.values()]
+  const heard = settled && unsafe !== 'both' ? [worst] : apart || either ? spans : [...voices.values()]
   const low = Math.min(...heard.map(({ at }) => at.low))
   const high = Math.max(...heard.map(({ at }) => at.high))
   return {
