@@ -100,6 +100,8 @@ test('a back-up brings a venue to another phone, at once in its list; a damaged 
   await onDemo(/Fennel/, async (page) => {
     await page.getByRole('link', { name: 'Venues' }).click()
     await page.getByRole('link', { name: 'Settings and back-up' }).click()
+    // The page before has a file key of its own.
+    await expect(page.getByRole('button', { name: 'Save a back-up' })).toBeVisible()
     const bring = (text: string) =>
       page
         .locator('input[type=file]')

@@ -59,3 +59,30 @@ it.each(['museum', 'clinic', 'interchange', 'teaching'])(
     expect(held).toBeGreaterThan(2)
   },
 )
+
+/** Every observation's word, or its noise meter, taken at another time. */
+function seenAt(survey: Survey, what: 'flow' | 'meter', time: string): Survey {
+  const zones = survey.view.zones.map((zone) => ({
+    ...zone,
+    observations: zone.observations.map((one) => {
+      const { flow } = one.words
+      if (what === 'flow') return flow ? { ...one, words: { ...one.words, flow: { ...flow, time } } } : one
+      const noise = (one.readings.noise ?? []).map((reading) => ({ ...reading, time }))
+      return { ...one, readings: { ...one.readings, noise } }
+    }),
+  }))
+  return { ...survey, view: { ...survey.view, zones } }
+}
+
+it.each(['flow', 'meter'] as const)('ends with what was seen first, the %s too', (what) => {
+  const survey = seenAt(venue('museum'), what, '2026-10-20T09:00:00Z')
+  const [walk] = survey.view.walks
+  if (!walk) throw new Error('the museum has no walk')
+  const assessment = runToEnd(judgeSurvey(survey, { planner: idle, on: '2026-11-30', walk: walk.id }))
+  const [result] = assessment.walks
+  if (!result) throw new Error('not judged')
+  const until = validUntil(scopeOf(survey, result, assessment, { on: '2026-11-30' }, undefined))
+  expect(until).toBe('2026-12-19')
+  expect(staleOn(survey, walk.id, '2026-12-19')).toBe(false)
+  expect(staleOn(survey, walk.id, '2026-12-20')).toBe(true)
+})

@@ -38,11 +38,9 @@ export function validUntil(scope: Scope): string | null {
     if (segment.ledBy !== 'robot') continue
     const zone = scope.view.zones.find((one) => one.id === segment.zone)
     for (const seen of zone?.observations ?? []) {
-      const people = [seen.words.crowd, seen.words.noise]
-      add(
-        people.filter((answer) => answer !== undefined),
-        peopleDays,
-      )
+      const { crowd, noise, flow } = seen.words
+      const people = [crowd, noise, flow].filter((answer) => answer !== undefined)
+      add([...people, ...(seen.readings.noise ?? [])], peopleDays)
     }
   }
   for (const { result } of scope.stretches) if (result.override) ends.push(result.override.until)
